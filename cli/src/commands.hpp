@@ -1,0 +1,22 @@
+// Every command of the program, one source file each (cmd_NAME.cpp).
+#pragma once
+
+#include <vector>
+
+#include "command_line.hpp"
+
+namespace brink::cli {
+
+Command readings_command();
+Command sets_command();
+Command kinematics_command();
+Command stereonet_command();
+Command wedge_command();
+Command report_command();
+
+inline std::vector<Command> all_commands() {
+  return {readings_command(),  sets_command(),  kinematics_command(),
+          stereonet_command(), wedge_command(), report_command()};
+}
+
+}  // namespace brink::cli

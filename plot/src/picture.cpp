@@ -1,0 +1,2 @@
+// Placeholder until the drawing layer lands.
+namespace brink::plot {}
