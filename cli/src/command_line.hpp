@@ -20,7 +20,8 @@ struct Option {
   std::string default_text;  // as help shows it; empty: none
   bool required = false;
   bool repeatable = false;
-  std::string group;  // heading in the help, "Options" where empty
+  std::string group;       // heading in the help, "Options" where empty
+  std::string short_name;  // "-o"; empty: none
 };
 
 enum class Positionals { none, files, site };

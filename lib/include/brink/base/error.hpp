@@ -20,10 +20,10 @@ enum class ErrorKind {
 
 // Where in the input. Lines and columns count from 1; 0 or empty means unknown or not applicable.
 struct Place {
-  std::string file;
+  std::string file = {};
   std::size_t line = 0;
   std::size_t column = 0;
-  std::string key;  // heading of the column, key of the site file, or name of the option
+  std::string key = {};  // heading of the column, key of the site file, or name of the option
 };
 
 // "file:12:3: dip: " with the unknown parts left out; empty for an empty place.
