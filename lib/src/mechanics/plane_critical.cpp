@@ -3,6 +3,7 @@
 #include <boost/math/tools/minima.hpp>
 #include <cmath>
 #include <limits>
+#include <numbers>
 #include <vector>
 
 #include "brink/base/error.hpp"
@@ -78,6 +79,11 @@ Candidate refined(const CrackObjective& objective, double low_m, double high_m, 
   return fs < best.factor_of_safety ? Candidate{x_m, fs} : best;
 }
 
+// Steps crowd at both ends, where a small block under a full crack changes fastest.
+double crowded_share(int step) {
+  return (1.0 - std::cos(std::numbers::pi * step / kSteps)) / 2.0;
+}
+
 // Every valley of a fine scan is refined, so that the least of several is found.
 class Scan {
  public:
@@ -85,7 +91,7 @@ class Scan {
     if (!(to_m > from_m)) return;
     std::vector<Candidate> points;
     for (int i = 0; i <= kSteps; ++i) {
-      const double x_m = i == kSteps ? to_m : from_m + (to_m - from_m) * i / kSteps;
+      const double x_m = i == kSteps ? to_m : from_m + (to_m - from_m) * crowded_share(i);
       points.push_back({x_m, objective(x_m)});
       highest_ = std::max(highest_, points.back().factor_of_safety);
     }

@@ -13,8 +13,11 @@
 namespace brink {
 namespace {
 
-void check_dip(const char* name, Angle dip, double low, double high) {
-  require_between(name, dip.deg(), low, high);
+void check_face_dip(double deg) {
+  if (deg > 0.0 && deg < 180.0) return;
+  require_finite("face dip", deg);
+  throw Error(ErrorKind::argument, Place{{}, 0, 0, "face dip"}, "is out of range", shortest(deg),
+              "above 0 and below 180 degrees");
 }
 
 void check_forces(const char* name, const std::vector<DirectedForce>& forces) {
@@ -26,10 +29,9 @@ void check_forces(const char* name, const std::vector<DirectedForce>& forces) {
 }
 
 void check_input(const PlaneSlideInput& in) {
-  check_dip("plane dip", in.plane.dip, 0.0, 90.0);
-  check_dip("upper dip", in.upper.dip, 0.0, 90.0);
-  require_positive("face dip", in.face.dip.deg());
-  if (in.face.dip >= 180_deg) check_dip("face dip", in.face.dip, 0.0, 179.0);
+  require_between("plane dip", in.plane.dip.deg(), 0.0, 90.0);
+  require_between("upper dip", in.upper.dip.deg(), 0.0, 90.0);
+  check_face_dip(in.face.dip.deg());
   for (const Angle a : {in.plane.dip_direction, in.face.dip_direction, in.upper.dip_direction})
     require_finite("dip direction", a.deg());
   require_positive("height", in.height_m);
@@ -91,9 +93,9 @@ Crack given_crack(const PlaneSlideInput& in, const SectionShape& shape, PlaneSli
   const bool in_the_air = in.crack_setback_m < 0.0 && shape.face_dip >= 90_deg;
   if (in_the_air || !longer(x_m, 0.0, shape)) {
     out.reason = fmt::format(
-        "the crack comes out in the face below the plane: the toe lies behind it ({} m of setback "
-        "would pass through the toe)",
-        fixed(-shape.crest.x(), 3));
+        "the crack comes out in the face in front of the plane's toe: no block is left between it "
+        "and the face (the toe is {} m {} the crest)",
+        fixed(std::abs(shape.crest.x()), 3), shape.crest.x() < 0.0 ? "behind" : "in front of");
     return {};
   }
   if (longer(shape.exit.x(), x_m, shape)) return {true, x_m};

@@ -46,21 +46,21 @@ TangentStrength tangent(const BilinearPatton& law, double stress_kPa) {
 }
 
 void check(const MohrCoulomb& law) {
-  require_not_negative("cohesion_kPa", law.cohesion_kPa);
+  require_not_negative("cohesion", law.cohesion_kPa);
   require_friction("friction", law.friction);
 }
 
 void check(const BartonBandis& law) {
-  require_between("residual_friction", law.residual_friction.deg(), 0.0, kGreatestTotal.deg());
-  require_between("jrc", law.jrc, 0.0, 20.0);
-  require_positive("jcs_kPa", law.jcs_kPa);
+  require_between("residual friction", law.residual_friction.deg(), 0.0, kGreatestTotal.deg());
+  require_between("JRC", law.jrc, 0.0, 20.0);
+  require_positive("JCS", law.jcs_kPa);
 }
 
 void check(const BilinearPatton& law) {
   require_friction("friction", law.friction);
   require_not_negative("roughness", law.roughness.deg());
   require_friction("friction + roughness", law.friction + law.roughness);
-  require_not_negative("transition_kPa", law.transition_kPa);
+  require_not_negative("transition stress", law.transition_kPa);
 }
 
 }  // namespace
@@ -91,8 +91,8 @@ TangentStrength settle_tangent_strength(
 
 BartonBandis scaled_to_length(const BartonBandis& sample, double joint_length_m,
                               double sample_length_m) {
-  require_positive("joint_length_m", joint_length_m);
-  require_positive("sample_length_m", sample_length_m);
+  require_positive("joint length", joint_length_m);
+  require_positive("sample length", sample_length_m);
   const double ratio = std::max(joint_length_m / sample_length_m, 1.0);
   return {sample.residual_friction, sample.jrc * std::pow(ratio, -0.02 * sample.jrc),
           sample.jcs_kPa * std::pow(ratio, -0.03 * sample.jrc)};
