@@ -25,22 +25,27 @@ struct KinematicsOptions {
 // set").
 struct SetCount {
   int set_a = 0;
-  int set_b = 0;  // 0 for planes; for pairs set_a <= set_b
+  int set_b = 0;  // pairs: the second set, after set_a in order, "no set" being the last
   std::uint64_t tested = 0;
   std::uint64_t admissible = 0;
   double tested_weight = 0.0;
   double admissible_weight = 0.0;
 };
 
-// share = admissible / tested; absent where nothing was tested.
+// share = admissible / tested; absent where nothing was tested. A pair weighs the product of its
+// readings' weights.
 struct ModeCount {
   std::uint64_t tested = 0;
   std::uint64_t admissible = 0;
   std::optional<double> share;
   std::optional<double> weighted_share;
-  std::optional<double> share_low;  // 95 % interval, bootstrap over readings
+  // 95 % interval of `share`, bootstrap over readings; absent for a single reading. No width where
+  // none or all are admissible: resampling cannot show what was never seen.
+  std::optional<double> share_low;
   std::optional<double> share_high;
-  std::vector<SetCount> by_set;  // planes: sets with set_b == 0; pairs: pairs of sets
+  // Planes: each set, then the readings of no set; pairs: each pair of sets in that order. Where
+  // nothing was tested there is no entry; the entries add up to the counts above.
+  std::vector<SetCount> by_set;
 };
 
 struct FaceKinematics {
@@ -64,8 +69,9 @@ struct KinematicsResult {
 
 // Tests every reading and every pair of readings on every face. `assignment` is one integer a
 // reading, 0 for no set (all zeros where sets are not wanted); `set_count` the number of sets.
-// Definitions: kinematics/modes.hpp. Throws ErrorKind::argument for a face, friction or tolerance
-// out of its range.
+// Definitions: kinematics/modes.hpp; a dry wedge's factor of safety: mechanics/dry_wedge.hpp. Cost:
+// some nanoseconds a pair and face, N (N - 1) / 2 pairs; memory grows with N. Throws
+// ErrorKind::argument for a face, friction or tolerance out of its range.
 KinematicsResult test_kinematics(const Readings& readings, const std::vector<int>& assignment,
                                  std::size_t set_count, const KinematicsOptions& options);
 

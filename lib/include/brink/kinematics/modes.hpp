@@ -30,21 +30,20 @@ struct ModeSettings {
   Angle toppling_tolerance = Angle::degrees(30.0);  // 0..180
 };
 
-// Directions within an angle of an azimuth, as sign tests against the window's edges.
+// Directions within an angle of an azimuth, as sign tests against the window's edges. A window of
+// 180 degrees to each side holds every direction.
 struct AzimuthWindow {
   double sin_azimuth;  // of its middle
   double cos_azimuth;
   double sin_half;  // of the half width, the tie included
   double cos_half;
-  bool open;  // every direction is inside
 };
 
-// A slope limit L as the pair (sin L, cos L), clipped to L >= 0, for testing tan(plunge) against
-// it by products. `none` marks a limit below horizontal, which every plunge is beyond.
+// A limit L on a slope, for testing tan(plunge) against tan(L) by products. The sign of
+// sin(L) is kept, so that every plunge is beyond a limit below horizontal.
 struct SlopeLimit {
-  double sin;
-  double cos;
-  bool none;
+  double signed_sin_squared;
+  double cos_squared;
 };
 
 // Everything the tests need about one face. Ties are already inside the limits.
