@@ -19,8 +19,11 @@ namespace brink {
 // out of the rock through the upper ground. Where not (ground steeper than the face, in its
 // direction) no wedge forms on that face.
 inline bool rises_to_crest(const Vector3& face_normal, const Vector3& upper_normal) {
-  // The line up the dip is the part of "up" that lies in the face.
-  return strictly_above(upper_normal.z() - face_normal.z() * upper_normal.dot(face_normal), 0.0);
+  // The line up the dip is the part of "up" that lies in the face, here with its length.
+  const double rise = upper_normal.z() - face_normal.z() * upper_normal.dot(face_normal);
+  const double length =
+      std::sqrt(face_normal.x() * face_normal.x() + face_normal.y() * face_normal.y());
+  return rise > kTie * length;
 }
 
 // Which side of its plane the block lies on: +1 on the side of the normal given, -1 on the other;

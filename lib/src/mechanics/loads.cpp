@@ -1,0 +1,14 @@
+#include "brink/mechanics/loads.hpp"
+
+namespace brink {
+
+Vector3 force_vector(const DirectedForce& force) {
+  return force.force_kN * direction(force.towards);
+}
+
+Vector3 seismic_vector(const Seismic& seismic, Angle trend, double weight_kN) {
+  const Vector3 level = direction({trend, Angle{}});
+  return weight_kN * (seismic.horizontal * level + Vector3(0.0, 0.0, seismic.vertical));
+}
+
+}  // namespace brink
