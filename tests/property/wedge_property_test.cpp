@@ -63,7 +63,7 @@ TEST(WedgeProperty, SwappingThePlanesChangesNothing) {
 
 TEST(WedgeProperty, SizeDoesNotMatterWithoutCohesionAndOutsideForces) {
   on_random_wedges(23, 500, true, [](WedgeCase w, const WedgeResult&) {
-    w.strength1.cohesion_kPa = w.strength2.cohesion_kPa = 0;
+    reference::drop_cohesion(w);
     w.loads.clear();
     w.bolts.clear();
     w.water = WaterFill{0.4};

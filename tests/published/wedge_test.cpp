@@ -23,8 +23,8 @@ WedgeCase comprehensive_example() {
   w.geometry.crack = TensionCrack{{70_deg, 165_deg}, 40.0};
   w.unit_weight_kN_m3 = 160.0;
   w.water_unit_weight_kN_m3 = 62.5;
-  w.strength1 = {500.0, 20_deg};
-  w.strength2 = {1000.0, 30_deg};
+  w.strength1 = MohrCoulomb{500.0, 20_deg};
+  w.strength2 = MohrCoulomb{1000.0, 30_deg};
   w.water = WaterFill{1.0};
   return w;
 }
@@ -80,8 +80,8 @@ TEST(PublishedWedge, HoekBrayAngleFactors) {
   WedgeCase w = comprehensive_example();
   w.geometry.crack.reset();
   w.geometry.size = {WedgeMeasure::height, 1.0};
-  w.strength1.friction = 30_deg;
-  w.strength2.friction = 20_deg;
+  w.strength1 = MohrCoulomb{500.0, 30_deg};
+  w.strength2 = MohrCoulomb{1000.0, 20_deg};
   w.geometry.size.value_m = 130.0 / wedge_block(w.geometry).total_height_m;
   const WedgeResult r = analyse_wedge(w);
   ASSERT_TRUE(r.forms);
@@ -108,8 +108,8 @@ TEST(PublishedWedge, HoekBrayFrictionOnly) {
   w.geometry.face = {65_deg, 200_deg};
   w.geometry.size.value_m = 20.0;
   w.unit_weight_kN_m3 = 26.0;
-  w.strength1.friction = 35_deg;
-  w.strength2.friction = 20_deg;
+  w.strength1 = MohrCoulomb{0.0, 35_deg};
+  w.strength2 = MohrCoulomb{0.0, 20_deg};
   const double safety = analyse_wedge(w).factor_of_safety;
   EXPECT_NEAR(safety, 1.30, 0.03);
   const AngleFactors k = angle_factors(w.geometry);
@@ -134,7 +134,7 @@ TEST(PublishedWedge, KovariFritzWedgeFactor) {
       w.geometry.face = {75_deg, 180_deg};
       w.geometry.size.value_m = 10.0;
       w.unit_weight_kN_m3 = 26.0;
-      w.strength1.friction = w.strength2.friction = 33_deg;
+      w.strength1 = w.strength2 = MohrCoulomb{0.0, 33_deg};
       const WedgeResult r = analyse_wedge(w);
       if (!r.forms || r.contact.mode != WedgeMode::both) continue;
       const Vector3 v = *r.block.line;

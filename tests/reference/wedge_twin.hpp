@@ -45,6 +45,14 @@ inline double passive_part(const Vector3& pull, const Vector3& slide,
   return sum;
 }
 
+inline const MohrCoulomb& mohr(const Strength& strength) {
+  return std::get<MohrCoulomb>(strength);
+}
+
+inline void drop_cohesion(WedgeCase& w) {
+  for (Strength* s : {&w.strength1, &w.strength2}) std::get<MohrCoulomb>(*s).cohesion_kPa = 0;
+}
+
 // The case must form a wedge that its crack, where there is one, does not make disappear.
 inline TwinResult twin(const WedgeCase& w) {
   const WedgeGeometry& g = w.geometry;
@@ -112,9 +120,10 @@ inline TwinResult twin(const WedgeCase& w) {
   const bool passive = w.bolt_action == BoltAction::passive;
   if (!passive) r += bolts;
 
-  const double t1 = std::tan(w.strength1.friction.rad()), t2 = std::tan(w.strength2.friction.rad());
-  const double k1 = w.strength1.cohesion_kPa * out.solid.areas[0];
-  const double k2 = w.strength2.cohesion_kPa * out.solid.areas[1];
+  const double t1 = std::tan(mohr(w.strength1).friction.rad()),
+               t2 = std::tan(mohr(w.strength2).friction.rad());
+  const double k1 = mohr(w.strength1).cohesion_kPa * out.solid.areas[0];
+  const double k2 = mohr(w.strength2).cohesion_kPa * out.solid.areas[1];
   Eigen::Matrix3d columns;
   columns << m1, m2, -v;
   const Vector3 x = columns.fullPivLu().solve(-r);
@@ -159,8 +168,8 @@ class RandomWedges {
       w.geometry.crack = TensionCrack{{degrees(50, 90), degrees(0, 360)}, number(0, 40)};
     }
     w.unit_weight_kN_m3 = number(20, 30);
-    w.strength1 = {chance(0.3) ? 0.0 : number(0, 80), degrees(0, 60)};
-    w.strength2 = {chance(0.3) ? 0.0 : number(0, 80), degrees(0, 60)};
+    w.strength1 = MohrCoulomb{chance(0.3) ? 0.0 : number(0, 80), degrees(0, 60)};
+    w.strength2 = MohrCoulomb{chance(0.3) ? 0.0 : number(0, 80), degrees(0, 60)};
     if (chance(0.5)) w.water = WaterFill{number(0, 1)};
     if (chance(0.25)) w.water = WaterPressures{number(0, 120), number(0, 120), number(0, 120)};
     if (chance(0.3)) w.seismic.horizontal = number(0, 0.4);

@@ -1,4 +1,3 @@
-#include "brink/base/error.hpp"
 #include "reference/wedge_twin.hpp"
 
 #include <gtest/gtest.h>
@@ -6,6 +5,7 @@
 #include <array>
 #include <map>
 
+#include "brink/base/error.hpp"
 #include "brink/mechanics/dry_wedge.hpp"
 
 namespace brink {
@@ -75,17 +75,17 @@ TEST(WedgeTwin, DirectionsAlone) {
     WedgeCase w = draw.next();
     w.geometry.crack.reset();
     w.geometry.size.measure = WedgeMeasure::height;
-    w.strength1.cohesion_kPa = w.strength2.cohesion_kPa = 0;
+    reference::drop_cohesion(w);
     w.water = WaterFill{0};
     w.seismic = {};
     w.loads.clear();
     w.bolts.clear();
     const WedgeResult r = analyse_wedge(w);
     if (!r.forms) continue;
-    const double fast =
-        dry_factor_of_safety(upward_normal(w.geometry.plane1), upward_normal(w.geometry.plane2),
-                             tan(w.strength1.friction), tan(w.strength2.friction),
-                             outward_normal(w.geometry.face), upward_normal(w.geometry.upper));
+    const double fast = dry_factor_of_safety(
+        upward_normal(w.geometry.plane1), upward_normal(w.geometry.plane2),
+        tan(reference::mohr(w.strength1).friction), tan(reference::mohr(w.strength2).friction),
+        outward_normal(w.geometry.face), upward_normal(w.geometry.upper));
     ASSERT_NEAR(r.factor_of_safety, fast, 1e-9 * std::max(1.0, fast)) << i;
     ++compared;
   }

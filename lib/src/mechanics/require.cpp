@@ -39,6 +39,13 @@ void require_between(std::string_view name, double value, double low, double hig
   if (value > high) refuse(name, "is too large", value, accepted);
 }
 
+void require_below(std::string_view name, double value, double low, double limit) {
+  require_finite(name, value);
+  const std::string accepted = shortest(low) + " or more and below " + shortest(limit);
+  if (value < low) refuse(name, "is too small", value, accepted);
+  if (value >= limit) refuse(name, "is too large", value, accepted);
+}
+
 void require_friction(std::string_view name, Angle friction) {
   const double deg = friction.deg();
   require_finite(name, deg);

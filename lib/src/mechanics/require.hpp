@@ -13,6 +13,8 @@ void require_not_negative(std::string_view name, double value);
 void require_finite(std::string_view name, double value);
 // low <= value <= high.
 void require_between(std::string_view name, double value, double low, double high);
+// low <= value < limit.
+void require_below(std::string_view name, double value, double low, double limit);
 // 0 <= friction < 90 degrees.
 void require_friction(std::string_view name, Angle friction);
 

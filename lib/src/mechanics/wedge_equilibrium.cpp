@@ -11,6 +11,7 @@
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
 #include "brink/base/ties.hpp"
+#include "require.hpp"
 
 namespace brink {
 
@@ -19,50 +20,27 @@ namespace {
 // A driving force below this part of the weight is rounding: nothing drives the block.
 constexpr double kNoDrive = 1e-12;
 
-void require(bool holds, const char* what, double value, const char* accepted) {
-  if (holds) return;
-  throw Error(ErrorKind::argument, {}, fmt::format("{} is out of range", what),
-              std::isfinite(value) ? shortest(value) : "not a number", accepted);
-}
-
-void check(const MohrCoulomb& strength, const char* friction, const char* cohesion) {
-  const double phi = strength.friction.deg();
-  require(phi >= 0.0 && phi < 90.0, friction, phi, "0 or more and below 90 degrees");
-  const double c = strength.cohesion_kPa;
-  require(c >= 0.0 && std::isfinite(c), cohesion, c, "0 kPa or more");
-}
-
 void check(const WedgeWater& water) {
   if (const auto* fill = std::get_if<WaterFill>(&water)) {
-    require(fill->fill >= 0.0 && fill->fill <= 1.0, "the water fill", fill->fill,
-            "0 (dry) to 1 (full)");
+    require_between("water fill", fill->fill, 0.0, 1.0);
     return;
   }
   const auto& u = std::get<WaterPressures>(water);
-  for (const double pressure : {u.plane1_kPa, u.plane2_kPa, u.crack_kPa}) {
-    require(pressure >= 0.0 && std::isfinite(pressure), "a water pressure", pressure,
-            "0 kPa or more");
-  }
+  require_not_negative("water pressure on plane 1", u.plane1_kPa);
+  require_not_negative("water pressure on plane 2", u.plane2_kPa);
+  require_not_negative("water pressure in the crack", u.crack_kPa);
 }
 
 void check(const WedgeCase& w) {
-  require(w.unit_weight_kN_m3 > 0.0 && std::isfinite(w.unit_weight_kN_m3), "the unit weight",
-          w.unit_weight_kN_m3, "above 0 kN/m3");
-  require(w.water_unit_weight_kN_m3 > 0.0 && std::isfinite(w.water_unit_weight_kN_m3),
-          "the water's unit weight", w.water_unit_weight_kN_m3, "above 0 kN/m3");
-  check(w.strength1, "the friction angle of plane 1", "the cohesion of plane 1");
-  check(w.strength2, "the friction angle of plane 2", "the cohesion of plane 2");
+  require_positive("unit weight", w.unit_weight_kN_m3);
+  require_positive("unit weight of water", w.water_unit_weight_kN_m3);
+  check_strength(w.strength1);
+  check_strength(w.strength2);
   check(w.water);
-  require(w.seismic.horizontal >= 0.0 && std::isfinite(w.seismic.horizontal),
-          "the horizontal seismic coefficient", w.seismic.horizontal, "0 or more");
-  require(std::isfinite(w.seismic.vertical), "the vertical seismic coefficient", w.seismic.vertical,
-          "a number, up positive");
-  for (const auto* forces : {&w.loads, &w.bolts}) {
-    for (const DirectedForce& f : *forces) {
-      require(f.force_kN >= 0.0 && std::isfinite(f.force_kN), "a load or bolt force", f.force_kN,
-              "0 kN or more; turn its direction about instead");
-    }
-  }
+  require_not_negative("horizontal seismic coefficient", w.seismic.horizontal);
+  require_finite("vertical seismic coefficient", w.seismic.vertical);
+  for (const DirectedForce& load : w.loads) require_not_negative("load", load.force_kN);
+  for (const DirectedForce& bolt : w.bolts) require_not_negative("bolt force", bolt.force_kN);
 }
 
 Angle seismic_trend(const WedgeCase& w, const WedgeBlock& block) {
@@ -102,35 +80,39 @@ std::string water_assumption(const WedgeCase& w, const WedgeBlock& block, double
       pressure_kPa, shape, shortest(fill));
 }
 
-// Tangents of friction and the cohesive forces of the planes that are in contact.
-double shear_strength_kN(const WedgeCase& w, const WedgeAreas& a, const WedgeContact& c) {
-  const bool on1 = c.mode == WedgeMode::both || c.mode == WedgeMode::plane1;
-  const bool on2 = c.mode == WedgeMode::both || c.mode == WedgeMode::plane2;
+// The line that stands for a plane's strength at the stress it bears.
+TangentStrength strength_at(const Strength& strength, double normal_kN, double area_m2) {
+  return tangent_strength(strength, normal_kN / area_m2);
+}
+
+double shear_strength_kN(const WedgeResult& r) {
+  const WedgeAreas& a = r.block.areas;
   double sum = 0.0;
-  if (on1) sum += w.strength1.cohesion_kPa * a.plane1_m2 + c.normal1_kN * tan(w.strength1.friction);
-  if (on2) sum += w.strength2.cohesion_kPa * a.plane2_m2 + c.normal2_kN * tan(w.strength2.friction);
+  if (r.strength1) {
+    sum +=
+        r.strength1->cohesion_kPa * a.plane1_m2 + r.contact.normal1_kN * tan(r.strength1->friction);
+  }
+  if (r.strength2) {
+    sum +=
+        r.strength2->cohesion_kPa * a.plane2_m2 + r.contact.normal2_kN * tan(r.strength2->friction);
+  }
   return sum;
 }
 
-// What passive bolts of sum `pull` add to the resistance against the movement of `contact`.
-double passive_kN(const Vector3& pull, const WedgeCase& w, const WedgeBlock& block,
-                  const WedgeContact& contact) {
-  const double tan1 = tan(w.strength1.friction);
-  const double tan2 = tan(w.strength2.friction);
-  const double against = -pull.dot(contact.slide);
-  switch (contact.mode) {
-    case WedgeMode::both: {
-      const auto [raised1, raised2] = normals_on_both(pull, block.into1, block.into2);
-      return against + raised1 * tan1 + raised2 * tan2;
-    }
-    case WedgeMode::plane1:
-      return against - pull.dot(block.into1) * tan1;
-    case WedgeMode::plane2:
-      return against - pull.dot(block.into2) * tan2;
-    case WedgeMode::lifts:
-      break;
+// What passive bolts of sum `pull` add to the resistance: their part against the movement, and the
+// friction of the normals they raise.
+double passive_kN(const Vector3& pull, const WedgeResult& r) {
+  const WedgeBlock& block = r.block;
+  double sum = -pull.dot(r.contact.slide);
+  if (r.strength1 && r.strength2) {
+    const auto [raised1, raised2] = normals_on_both(pull, block.into1, block.into2);
+    sum += raised1 * tan(r.strength1->friction) + raised2 * tan(r.strength2->friction);
+  } else if (r.strength1) {
+    sum -= pull.dot(block.into1) * tan(r.strength1->friction);
+  } else if (r.strength2) {
+    sum -= pull.dot(block.into2) * tan(r.strength2->friction);
   }
-  return 0.0;
+  return sum;
 }
 
 Vector3 sum_of(const std::vector<DirectedForce>& forces) {
@@ -155,6 +137,33 @@ Vector3 acting_forces(const WedgeCase& w, WedgeResult& result) {
          seismic_vector(w.seismic, seismic_trend(w, block), result.weight_kN) +
          result.water.plane1_kN * block.into1 + result.water.plane2_kN * block.into2 +
          result.water.crack_kN * block.into_from_crack + sum_of(w.loads);
+}
+
+// Tangent strengths of the planes in contact.
+void take_strength(const WedgeCase& w, WedgeResult& r) {
+  const WedgeMode mode = r.contact.mode;
+  if (mode == WedgeMode::both || mode == WedgeMode::plane1) {
+    r.strength1 = strength_at(w.strength1, r.contact.normal1_kN, r.block.areas.plane1_m2);
+  }
+  if (mode == WedgeMode::both || mode == WedgeMode::plane2) {
+    r.strength2 = strength_at(w.strength2, r.contact.normal2_kN, r.block.areas.plane2_m2);
+  }
+}
+
+void add_passive_bolts(const Vector3& pull, WedgeResult& r) {
+  if (r.contact.mode == WedgeMode::lifts) return;
+  r.resisting_kN += passive_kN(pull, r);
+  if (r.resisting_kN >= 0.0) return;
+  r.resisting_kN = 0.0;
+  r.warnings.push_back("the passive bolts pull the block the way it moves: no resistance is left");
+}
+
+double safety(const WedgeResult& r) {
+  if (r.contact.mode == WedgeMode::lifts) return 0.0;
+  if (r.contact.driving_kN <= kNoDrive * r.weight_kN) {
+    return std::numeric_limits<double>::infinity();
+  }
+  return r.resisting_kN / r.contact.driving_kN;
 }
 
 void warn_of_mode(WedgeResult& result) {
@@ -242,21 +251,10 @@ WedgeResult analyse_wedge(const WedgeCase& w) {
   if (active) resultant += bolts;
   result.contact =
       wedge_contact(resultant, block.into1, block.into2, *block.line, result.weight_kN);
-  result.resisting_kN = shear_strength_kN(w, block.areas, result.contact);
-  if (!active) result.resisting_kN += passive_kN(bolts, w, block, result.contact);
-  if (result.resisting_kN < 0.0) {
-    result.warnings.push_back(
-        "the passive bolts pull the block along with its movement: no resistance is left");
-    result.resisting_kN = 0.0;
-  }
-  const double drive = result.contact.driving_kN;
-  if (result.contact.mode == WedgeMode::lifts) {
-    result.factor_of_safety = 0.0;
-  } else if (drive <= kNoDrive * result.weight_kN) {
-    result.factor_of_safety = std::numeric_limits<double>::infinity();
-  } else {
-    result.factor_of_safety = result.resisting_kN / drive;
-  }
+  take_strength(w, result);
+  result.resisting_kN = shear_strength_kN(result);
+  if (!active) add_passive_bolts(bolts, result);
+  result.factor_of_safety = safety(result);
   warn_of_mode(result);
   return result;
 }

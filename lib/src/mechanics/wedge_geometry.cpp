@@ -12,6 +12,7 @@
 #include "brink/base/ties.hpp"
 #include "brink/mechanics/dry_wedge.hpp"
 #include "brink/orientation/intersection.hpp"
+#include "require.hpp"
 
 namespace brink {
 
@@ -33,37 +34,16 @@ struct Corners {
   double rise;   // distance of the upper ground from the toe, along its normal
 };
 
-void require_range(double value, double low, double high, const char* what, const char* accepted) {
-  if (value >= low && value <= high) return;
-  throw Error(ErrorKind::argument, {}, fmt::format("{} is out of range", what), shortest(value),
-              accepted);
-}
-
-void require_plane(const Plane& plane, const char* what) {
-  require_range(plane.dip.deg(), 0.0, 90.0, what, "a dip of 0 to 90 degrees");
-}
-
 void check(const WedgeGeometry& g) {
-  require_plane(g.plane1, "the dip of plane 1");
-  require_plane(g.plane2, "the dip of plane 2");
-  if (!(g.face.dip.deg() > 0.0 && g.face.dip.deg() < 180.0)) {
-    throw Error(ErrorKind::argument, {}, "the dip of the face is out of range",
-                shortest(g.face.dip.deg()), "above 0 and below 180 degrees; past 90 it overhangs");
-  }
-  if (!(g.upper.dip.deg() >= 0.0 && g.upper.dip.deg() < 90.0)) {
-    throw Error(ErrorKind::argument, {}, "the dip of the upper ground is out of range",
-                shortest(g.upper.dip.deg()), "0 or more and below 90 degrees");
-  }
-  if (!(g.size.value_m > 0.0) || !std::isfinite(g.size.value_m)) {
-    throw Error(ErrorKind::argument, {}, "the size of the wedge is out of range",
-                shortest(g.size.value_m), "above 0 m");
-  }
+  require_between("dip of plane 1", g.plane1.dip.deg(), 0.0, 90.0);
+  require_between("dip of plane 2", g.plane2.dip.deg(), 0.0, 90.0);
+  require_below("dip of the upper ground", g.upper.dip.deg(), 0.0, 90.0);
+  require_positive("dip of the face", g.face.dip.deg());
+  require_below("dip of the face", g.face.dip.deg(), 0.0, 180.0);
+  require_positive("size of the wedge", g.size.value_m);
   if (!g.crack) return;
-  require_plane(g.crack->plane, "the dip of the tension crack");
-  if (!(g.crack->distance_m >= 0.0)) {
-    throw Error(ErrorKind::argument, {}, "the crack's distance behind the crest is out of range",
-                shortest(g.crack->distance_m), "0 m or more");
-  }
+  require_between("dip of the tension crack", g.crack->plane.dip.deg(), 0.0, 90.0);
+  require_not_negative("crack distance", g.crack->distance_m);
 }
 
 std::string line_text(const Vector3& v) {

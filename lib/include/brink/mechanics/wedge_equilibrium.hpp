@@ -51,8 +51,8 @@ WedgeContact wedge_contact(const Vector3& resultant, const Vector3& into1, const
 struct WedgeCase {
   WedgeGeometry geometry;
   double unit_weight_kN_m3 = 0.0;  // > 0
-  MohrCoulomb strength1;
-  MohrCoulomb strength2;
+  Strength strength1 = MohrCoulomb{};
+  Strength strength2 = MohrCoulomb{};
   WedgeWater water = WaterFill{};
   double water_unit_weight_kN_m3 = 9.81;
   Seismic seismic;  // trend: of the line of intersection where it is not given
@@ -76,6 +76,9 @@ struct WedgeResult {
   double weight_kN = 0.0;
   WedgeContact contact;  // with active bolts
   WedgeWaterForces water;
+  // The straight lines used for the planes in contact, at the stress that each bears.
+  std::optional<TangentStrength> strength1;
+  std::optional<TangentStrength> strength2;
   double resisting_kN = 0.0;      // passive bolts included
   double factor_of_safety = 0.0;  // infinite where nothing drives the block; 0 where it lifts
   std::vector<std::string> assumptions;  // what the water was taken to be
