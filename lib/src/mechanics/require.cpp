@@ -1,5 +1,7 @@
 #include "require.hpp"
 
+#include <fmt/format.h>
+
 #include <cmath>
 
 #include "brink/base/error.hpp"
@@ -34,7 +36,8 @@ void require_not_negative(std::string_view name, double value) {
 
 void require_between(std::string_view name, double value, double low, double high) {
   require_finite(name, value);
-  const std::string accepted = shortest(low) + " to " + shortest(high);
+  // Limits may be computed: six digits are enough to act on.
+  const std::string accepted = fmt::format("{:.6g} to {:.6g}", low, high);
   if (value < low) refuse(name, "is too small", value, accepted);
   if (value > high) refuse(name, "is too large", value, accepted);
 }
