@@ -13,7 +13,6 @@ namespace brink::cli {
 
 namespace {
 
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
 constexpr auto kDegrees = "degrees";
 
 Error value_error(const std::string& option, std::string_view text, std::string_view what,
@@ -52,43 +51,6 @@ Angle checked_azimuth(const std::string& option, std::string_view text, const ch
 }
 
 }  // namespace
-
-bool Interval::contains(double value) const {
-  return (low_open ? value > low : value >= low) && (high_open ? value < high : value <= high);
-}
-
-std::string Interval::text() const {
-  const std::string suffix = unit.empty() ? "" : " " + unit;
-  const bool bounded_below = low > -kInfinity;
-  const bool bounded_above = high < kInfinity;
-  if (!bounded_below && !bounded_above) return unit.empty() ? "a number" : "a number of " + unit;
-  if (bounded_below && bounded_above && !low_open && !high_open) {
-    return fmt::format("{} to {}{}", shortest(low), shortest(high), suffix);
-  }
-  std::string result;
-  if (bounded_below) result = fmt::format("{}{}", low_open ? "above " : "", shortest(low));
-  if (bounded_below && !low_open) result += bounded_above ? " or above" : suffix + " or above";
-  if (bounded_below && bounded_above) result += " and ";
-  if (bounded_above)
-    result += fmt::format("{}{}", high_open ? "below " : "at most ", shortest(high));
-  return bounded_above || low_open ? result + suffix : result;
-}
-
-Interval from_to(double low, double high, std::string unit) {
-  return {low, high, false, false, std::move(unit)};
-}
-Interval between(double low, double high, std::string unit) {
-  return {low, high, true, true, std::move(unit)};
-}
-Interval above(double low, std::string unit) {
-  return {low, kInfinity, true, true, std::move(unit)};
-}
-Interval at_least_value(double low, std::string unit) {
-  return {low, kInfinity, false, true, std::move(unit)};
-}
-Interval any_number(std::string unit) {
-  return {-kInfinity, kInfinity, true, true, std::move(unit)};
-}
 
 double parse_number(const std::string& option, std::string_view text, const Interval& accepted) {
   const auto value = parse_decimal(trimmed(text));
@@ -219,6 +181,22 @@ Option plane_option(std::string name, std::string help, Plane& target, std::stri
   return option;
 }
 
+Option face_option(std::string name, std::string help, Face& target, std::string group) {
+  Option option = value_option(name, "DIP/DIR", std::move(help), std::move(group));
+  option.take = [&target, name](std::string_view text) { target = parse_face(name, text); };
+  return option;
+}
+
+Option required(Option option) {
+  option.required = true;
+  return option;
+}
+
+Option with_default(Option option, std::string text) {
+  option.default_text = std::move(text);
+  return option;
+}
+
 void add_output_options(std::vector<Option>& options, OutputOptions& target) {
   options.push_back(flag_option("--json",
                                 "Prints one JSON document on standard output, full precision.",
@@ -268,9 +246,8 @@ void add_kinematic_options(std::vector<Option>& options, KinematicsOptions& targ
   };
   options.push_back(std::move(face));
 
-  Option upper = plane_option("--upper", "Ground above the crest.", target.upper, group);
-  upper.default_text = "level, 0/0";
-  options.push_back(std::move(upper));
+  options.push_back(with_default(
+      plane_option("--upper", "Ground above the crest.", target.upper, group), "level, 0/0"));
 
   constexpr double right_angle = 90.0;
   Option friction =
@@ -280,19 +257,18 @@ void add_kinematic_options(std::vector<Option>& options, KinematicsOptions& targ
   options.push_back(std::move(friction));
 
   constexpr double half_turn = 180.0;
-  Option strike =
+  options.push_back(with_default(
       angle_option("--strike-tolerance",
                    "Planar sliding: greatest angle between the dip directions of joint and face.",
-                   from_to(0.0, half_turn, kDegrees), target.strike_tolerance, group);
-  strike.default_text = shortest(target.strike_tolerance.deg());
-  options.push_back(std::move(strike));
-
-  Option toppling = angle_option(
-      "--toppling-tolerance",
-      "Toppling: greatest angle between a joint's dip direction and the face's, turned about.",
-      from_to(0.0, half_turn, kDegrees), target.toppling_tolerance, group);
-  toppling.default_text = shortest(target.toppling_tolerance.deg());
-  options.push_back(std::move(toppling));
+                   from_to(0.0, half_turn, kDegrees), target.strike_tolerance, group),
+      shortest(target.strike_tolerance.deg())));
+  options.push_back(with_default(
+      angle_option(
+          "--toppling-tolerance",
+          "Toppling: greatest angle between a joint's dip direction and the face's, turned "
+          "about.",
+          from_to(0.0, half_turn, kDegrees), target.toppling_tolerance, group),
+      shortest(target.toppling_tolerance.deg())));
 }
 
 void print_warnings(const std::vector<std::string>& warnings, const OutputOptions& output,

@@ -10,29 +10,12 @@
 #include <string_view>
 #include <vector>
 
+#include "brink/base/interval.hpp"
 #include "brink/kinematics/kinematics.hpp"
 #include "brink/orientation/face.hpp"
 #include "command_line.hpp"
 
 namespace brink::cli {
-
-// The values a number may have. An open end is not itself allowed.
-struct Interval {
-  double low;
-  double high;
-  bool low_open = false;
-  bool high_open = false;
-  std::string unit;  // for the message: "degrees", "m"
-
-  bool contains(double value) const;
-  std::string text() const;  // "0 to 90 degrees", "above 0 and below 180 degrees", "above 0 m"
-};
-
-Interval from_to(double low, double high, std::string unit = {});
-Interval between(double low, double high, std::string unit = {});  // both ends open
-Interval above(double low, std::string unit = {});
-Interval at_least_value(double low, std::string unit = {});
-Interval any_number(std::string unit = {});
 
 // Value parsers. Each throws Error(ErrorKind::argument) naming `option`, the text and what would be
 // accepted. Blanks around numbers are ignored; nan, inf and hexadecimal are refused.
@@ -65,6 +48,10 @@ Option number_option(std::string name, std::string value, std::string help, Inte
 Option angle_option(std::string name, std::string help, Interval accepted, Angle& target,
                     std::string group = {});
 Option plane_option(std::string name, std::string help, Plane& target, std::string group = {});
+Option face_option(std::string name, std::string help, Face& target, std::string group = {});
+// The same option, marked as one that has to be given, or with its default as the help shows it.
+Option required(Option option);
+Option with_default(Option option, std::string text);
 
 // What every command has.
 struct OutputOptions {
