@@ -3,11 +3,16 @@
 #pragma once
 
 #include <cstddef>
+#include <optional>
+#include <span>
 #include <string>
 #include <string_view>
 #include <vector>
 
+#include "brink/orientation/borehole.hpp"
+#include "brink/orientation/notation.hpp"
 #include "brink/orientation/orientation.hpp"
+#include "brink/readings/filter.hpp"
 
 namespace brink {
 
@@ -32,10 +37,32 @@ struct Rejection {
   std::string reason;      // what is wrong, and what would be accepted
 };
 
-// A column that travels along: one cell a used reading, in reading order.
+// Texts in one block of memory: at 10^6 readings a string each would cost more than the rest.
+class TextCells {
+ public:
+  void push_back(std::string_view cell) {
+    text_ += cell;
+    ends_.push_back(text_.size());
+  }
+  void reserve(std::size_t cells) { ends_.reserve(cells); }
+  std::size_t size() const { return ends_.size(); }
+  bool empty() const { return ends_.empty(); }
+  // Valid until the next push_back().
+  std::string_view operator[](std::size_t index) const {
+    const std::size_t begin = index == 0 ? 0 : ends_[index - 1];
+    return std::string_view(text_).substr(begin, ends_[index] - begin);
+  }
+
+ private:
+  std::string text_;
+  std::vector<std::size_t> ends_;
+};
+
+// A column that travels along: one cell a used reading, in reading order; empty where the file of
+// the reading has no such column.
 struct ExtraColumn {
   std::string heading;
-  std::vector<std::string> cells;
+  TextCells cells;
 };
 
 // All arrays have one entry a used reading, in input order. read == planes.size() + rejected.size()
@@ -54,9 +81,40 @@ struct Readings {
   std::size_t filtered = 0;           // left out by the user's filter
 
   std::size_t size() const { return planes.size(); }
-  // The extra column with this heading, case, spaces and underscores ignored; null where there is
-  // none.
+  // The extra column with this heading, compared by heading_key() (so "kind" finds "Type"); null
+  // where there is none.
   const ExtraColumn* find_column(std::string_view heading) const;
 };
+
+// The bytes of one input file. Both must outlive the call they are handed to.
+struct InputBytes {
+  std::string name;
+  std::string_view bytes;
+};
+
+struct ReadingOptions {
+  std::optional<Notation> notation;  // nothing: the headings decide
+  std::optional<StrikeRule> strike_rule;
+  Angle declination;         // added once to every azimuth, east positive; a column overrides it
+  std::optional<Hole> hole;  // for core where no column says how the hole runs
+  bool overturned = false;   // dips above 90 up to 180 are beds past vertical, not mistakes
+  std::vector<Filter> only;  // a row must pass all of them
+};
+
+// Reads every row of the files into one Readings, in order. Each file has its own headings; their
+// extra columns are joined by heading.
+//
+// A row that can't be used is a Rejection with its place and what would be accepted; the rest go
+// on. Rows that a filter leaves out are counted, not judged. Azimuth 360 is 0; dip 0 has direction
+// 0 (it may be blank); dip 90 keeps its direction. With `overturned`, the plane is kept and a
+// column "overturned" says "yes" for it. Weights are those of the columns weight and count,
+// multiplied, and scaled to sum to the number of readings.
+//
+// Error(input): no heading line, headings that don't make a plane or are ambiguous, a strike with
+// neither rule nor quadrant, a text column of bare pairs of numbers in which nothing shows which
+// comes first, or more than 100,000 rejected rows that are nine in ten of all.
+// Error(argument): a filter on a column that a file doesn't have.
+// Cost: linear; about 50 ns and 100 bytes a reading beside the text.
+Readings read_readings(std::span<const InputBytes> files, const ReadingOptions& options);
 
 }  // namespace brink
