@@ -76,10 +76,16 @@ std::optional<ParsedAngle> partial_bearing(NotationScanner& scan) {
   return bearing_angle(from, *degrees, towards);
 }
 
-void skip_separator(NotationScanner& scan) {
+// Past what parts two numbers; false where nothing does. A '-' with a blank before it and a digit
+// right after it is a sign, and left for the number.
+bool skip_separator(NotationScanner& scan) {
+  const bool blank = scan.skip_blanks();
+  NotationScanner ahead = scan.fork();
+  const bool dash = ahead.take("-");
+  const bool sign = dash && blank && ahead.peek() != ' ';
+  const bool mark = scan.take("/") || (!sign && scan.take("-")) || scan.take(",");
   scan.skip_blanks();
-  if (!scan.take("/") && !scan.take("-")) scan.take(",");
-  scan.skip_blanks();
+  return blank || mark;
 }
 
 struct DipAndLetter {
@@ -113,10 +119,11 @@ ParsedPlane plane_of_bearing(const ParsedAngle& strike, const DipAndLetter& rest
 
 ParsedPlane parse_bearing_text(std::string_view text, const TextRules& rules) {
   NotationScanner scan(text, rules.comma);
+  bool lacks_dip = false;
   if (const auto strike = partial_bearing(scan)) {
     skip_separator(scan);
     if (const auto rest = rest_as_dip(scan)) return plane_of_bearing(*strike, *rest, rules);
-    if (scan.at_end()) return no_plane(wrong("has a strike but no dip", "as in N45E 30SE"));
+    lacks_dip = scan.at_end();
   }
   scan = NotationScanner(text, rules.comma);
   if (const auto strike = whole_bearing(scan)) {
@@ -126,6 +133,7 @@ ParsedPlane parse_bearing_text(std::string_view text, const TextRules& rules) {
     const auto rest = parted ? rest_as_dip(scan) : std::nullopt;
     if (rest) return plane_of_bearing({*strike, {}}, *rest, rules);
   }
+  if (lacks_dip) return no_plane(wrong("has a strike but no dip", "as in N45E 30SE"));
   return no_plane(wrong("is not a strike bearing with a dip", "as in N45E 30SE or EW 40N"));
 }
 
@@ -162,10 +170,7 @@ std::optional<Pair> scan_pair(std::string_view text, DecimalComma comma) {
   NotationScanner scan(text, comma);
   const auto first = scan.take_degrees();
   if (!first) return std::nullopt;
-  const bool blank = scan.skip_blanks();
-  const bool mark = scan.take("/") || scan.take("-");
-  if (!blank && !mark) return std::nullopt;
-  scan.skip_blanks();
+  if (!skip_separator(scan)) return std::nullopt;
   const auto rest = rest_as_dip(scan);
   if (!rest) return std::nullopt;
   return Pair{*first, rest->dip, rest->letter};

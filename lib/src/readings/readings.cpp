@@ -92,6 +92,7 @@ class ReadingCollector {
   void find_filters(const std::string& name, const Row& headings);
   void find_extra(const Columns& columns, const Row& headings);
   void use(const Source& source, const Row& row, const Plane& plane, bool overturned);
+  void mark_overturned();
   std::optional<double> weight_of(const Source& source, const Row& row);
   void reject(const Source& source, const Row& row, std::optional<std::size_t> column,
               std::string reason);
@@ -270,6 +271,7 @@ void ReadingCollector::use(const Source& source, const Row& row, const Plane& pl
                            bool overturned) {
   const auto weight = weight_of(source, row);
   if (!weight) return;
+  if (overturned) mark_overturned();
   readings_.planes.push_back(plane);
   readings_.normals.push_back(normal_of_(plane));
   readings_.weights.push_back(*weight);
@@ -278,10 +280,17 @@ void ReadingCollector::use(const Source& source, const Row& row, const Plane& pl
   for (std::size_t i = 0; i < columns.size(); ++i) {
     readings_.extra[extra_of_column_[i]].cells.push_back(row.cell(columns[i]));
   }
-  if (!overturned) return;
-  TextCells& marks = readings_.extra[extra_index("overturned")].cells;
-  while (marks.size() + 1 < readings_.size()) marks.push_back({});
-  if (marks.size() < readings_.size()) marks.push_back("yes");
+}
+
+// Ahead of the reading itself: its cells of this column are then complete. A column of that name in
+// the file is the user's own.
+void ReadingCollector::mark_overturned() {
+  const std::size_t index = extra_index("overturned");
+  const bool from_file =
+      std::find(extra_of_column_.begin(), extra_of_column_.end(), index) != extra_of_column_.end();
+  if (from_file) return;
+  pad(readings_.extra[index].cells);
+  readings_.extra[index].cells.push_back("yes");
 }
 
 void ReadingCollector::reject(const Source& source, const Row& row,

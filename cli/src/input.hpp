@@ -1,0 +1,44 @@
+// Readings from the FILEs of a command line.
+#pragma once
+
+#include <string>
+#include <vector>
+
+#include "brink/readings/readings.hpp"
+#include "command_line.hpp"
+#include "options.hpp"
+
+namespace brink::cli {
+
+struct InputOptions {
+  ReadingOptions reading;
+  std::string set_column;  // heading of the column that names the sets; empty: none
+  bool strict = false;     // any rejected line is an error
+};
+
+// --notation, --strike-rule, --declination, --hole, --reference-line, --overturned, --only,
+// --strict. `target` must outlive the options.
+void add_input_options(std::vector<Option>& options, InputOptions& target);
+// --set-column, for commands that work with sets.
+Option set_column_option(InputOptions& target);
+
+// The bytes of a file, or of streams.in for "-". Error(file) where it can't be read or is a folder.
+std::string read_bytes(const std::string& name, Streams& streams);
+
+// Reads the files ("-": standard input, once), checks that the set column is there, and prints
+// warnings and rejected lines to streams.err unless quiet: up to `most_rejections` of these one by
+// one, the rest as a count.
+Readings load_readings(const std::vector<std::string>& files, const InputOptions& options,
+                       const OutputOptions& output, Streams& streams,
+                       std::size_t most_rejections = 20);
+
+// To be called once the results stand printed: Error(input), and so status 1, where not one reading
+// was usable or, with --strict, where a line was rejected.
+void require_usable(const Readings& readings, const InputOptions& options);
+
+// "pit.csv:7:1: dip: '120' is above 90; accepted: 0 to 90 degrees".
+std::string rejection_text(const Rejection& rejection);
+// "171 of 180 readings used (6 rejected, 3 left out by --only)".
+std::string usage_text(const Readings& readings);
+
+}  // namespace brink::cli
