@@ -1,0 +1,113 @@
+// brink kinematics: which readings and pairs of readings can move on each face.
+#include <algorithm>
+#include <memory>
+#include <ostream>
+#include <utility>
+
+#include "brink/base/error.hpp"
+#include "brink/kinematics/kinematics.hpp"
+#include "brink/record/kinematics_document.hpp"
+#include "brink/record/readings_document.hpp"
+#include "brink/sets/sets.hpp"
+#include "commands.hpp"
+#include "exit_status.hpp"
+#include "input.hpp"
+#include "kinematics_text.hpp"
+#include "options.hpp"
+
+namespace brink::cli {
+
+namespace {
+
+struct KinematicsRun {
+  InputOptions input;
+  KinematicsOptions tests;
+  OutputOptions output;
+  bool no_sets = false;
+};
+
+SetsResult sets_of(const Readings& readings, const KinematicsRun& run) {
+  if (run.no_sets) {
+    SetsResult none;
+    none.assignment.assign(readings.size(), 0);
+    none.unassigned = readings.size();
+    return none;
+  }
+  if (!run.input.set_column.empty()) return sets_by_column(readings, run.input.set_column);
+  return find_sets(readings, {std::nullopt, run.tests.seed, run.tests.threads});
+}
+
+Value inputs_value(const Readings& readings, const KinematicsRun& run) {
+  Object inputs = readings_inputs(readings, run.input.reading);
+  for (const auto& [key, value] : kinematics_inputs(run.tests).members()) inputs.add(key, value);
+  inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
+  inputs.add("find_sets", !run.no_sets && run.input.set_column.empty());
+  return inputs;
+}
+
+bool weights_differ(const Readings& readings) {
+  return std::adjacent_find(readings.weights.begin(), readings.weights.end(),
+                            std::not_equal_to<>()) != readings.weights.end();
+}
+
+int run_kinematics(const std::vector<std::string>& files, const KinematicsRun& run,
+                   Streams& streams) {
+  if (run.no_sets && !run.input.set_column.empty()) {
+    throw Error(ErrorKind::argument, Place{.file = {}, .key = "--no-sets"},
+                "is given together with --set-column", {}, "one of the two");
+  }
+  const Readings readings = load_readings(files, run.input, run.output, streams);
+  if (readings.size() == 0) require_usable(readings, run.input);
+  const SetsResult sets = sets_of(readings, run);
+  const KinematicsResult result =
+      test_kinematics(readings, sets.assignment, sets.sets.size(), run.tests);
+  std::vector<std::string> warnings = sets.warnings;
+  warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
+  print_warnings(warnings, run.output, streams);
+  if (run.output.json) {
+    warnings.insert(warnings.begin(), readings.warnings.begin(), readings.warnings.end());
+    streams.out << to_json(result_document("kinematics", inputs_value(readings, run), warnings,
+                                           kinematics_result(result, sets)));
+  } else {
+    streams.out << kinematics_text(result, sets, weights_differ(readings));
+  }
+  require_usable(readings, run.input);
+  return kDone;
+}
+
+}  // namespace
+
+Command kinematics_command() {
+  const auto run = std::make_shared<KinematicsRun>();
+  Command command;
+  command.name = "kinematics";
+  command.summary = "Tests which readings and pairs can slide or topple on a face";
+  command.description =
+      "Every reading is tested for planar sliding and flexural toppling, every pair of readings "
+      "for "
+      "wedge sliding and block toppling, on every face. Counts are given for all, for each set and "
+      "for each pair of sets, with an interval that shows how far they could have come out "
+      "otherwise had other joints been logged.";
+  command.positionals = Positionals::files;
+  add_kinematic_options(command.options, run->tests);
+  add_input_options(command.options, run->input);
+  command.options.push_back(set_column_option(run->input));
+  command.options.push_back(flag_option(
+      "--no-sets", "Looks for no sets: counts for all readings together.", run->no_sets));
+  command.options.push_back(seed_option(run->tests.seed));
+  command.options.push_back(threads_option(run->tests.threads));
+  add_output_options(command.options, run->output);
+  command.examples = {
+      {"brink kinematics quarry/readings.csv --face 70/135 --friction 32",
+       "One face, sets found by the program."},
+      {"brink kinematics quarry/readings.csv --face 60/135 --face 75/135 --friction 32 --upper "
+       "10/315 --json",
+       "Two slopes of the same face, the ground above falling away behind it."},
+  };
+  command.run = [run](const std::vector<std::string>& files, Streams& streams) {
+    return run_kinematics(files, *run, streams);
+  };
+  return command;
+}
+
+}  // namespace brink::cli
