@@ -39,7 +39,8 @@ SetsResult sets_of(const Readings& readings, const KinematicsRun& run) {
 
 Value inputs_value(const Readings& readings, const KinematicsRun& run) {
   Object inputs = readings_inputs(readings, run.input.reading);
-  for (const auto& [key, value] : kinematics_inputs(run.tests).members()) inputs.add(key, value);
+  const Object tests = kinematics_inputs(run.tests);
+  for (const auto& [key, value] : tests.members()) inputs.add(key, value);
   inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
   inputs.add("find_sets", !run.no_sets && run.input.set_column.empty());
   return inputs;
