@@ -16,7 +16,7 @@ Command report_command();
 
 // In the order of the help. A command joins the list when it works.
 inline std::vector<Command> all_commands() {
-  return {readings_command()};
+  return {readings_command(), wedge_command()};
 }
 
 }  // namespace brink::cli

@@ -43,14 +43,16 @@ void check(const WedgeCase& w) {
   for (const DirectedForce& bolt : w.bolts) require_not_negative("bolt force", bolt.force_kN);
 }
 
-Angle seismic_trend(const WedgeCase& w, const WedgeBlock& block) {
-  if (w.seismic.trend) return *w.seismic.trend;
+// Nothing without a horizontal load.
+std::optional<Angle> seismic_trend(const WedgeCase& w, const WedgeBlock& block) {
+  if (w.seismic.horizontal == 0.0) return std::nullopt;
+  if (w.seismic.trend) return w.seismic.trend;
   const Vector3& v = *block.line;
-  if (w.seismic.horizontal > 0.0 && at_most(std::hypot(v.x(), v.y()), 0.0)) {
-    throw Error(ErrorKind::argument, {},
+  if (at_most(std::hypot(v.x(), v.y()), 0.0)) {
+    throw Error(ErrorKind::argument, Place{.key = "seismic trend"},
                 "the line of intersection is vertical, so it gives the horizontal seismic load no "
                 "trend",
-                {}, "a seismic trend");
+                {}, "the trend along which the block is shaken");
   }
   return line_with_sense(v).trend;
 }
@@ -133,8 +135,9 @@ Vector3 acting_forces(const WedgeCase& w, WedgeResult& result) {
     result.warnings.push_back(
         "no crack cuts the wedge: the water pressure in the crack acts on nothing");
   }
+  result.seismic_trend = seismic_trend(w, block);
   return Vector3(0.0, 0.0, -result.weight_kN) +
-         seismic_vector(w.seismic, seismic_trend(w, block), result.weight_kN) +
+         seismic_vector(w.seismic, result.seismic_trend.value_or(Angle{}), result.weight_kN) +
          result.water.plane1_kN * block.into1 + result.water.plane2_kN * block.into2 +
          result.water.crack_kN * block.into_from_crack + sum_of(w.loads);
 }

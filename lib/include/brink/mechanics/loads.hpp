@@ -2,6 +2,7 @@
 #pragma once
 
 #include <optional>
+#include <string_view>
 #include <variant>
 
 #include "brink/orientation/orientation.hpp"
@@ -32,6 +33,8 @@ enum class BoltAction {
   active,   // tensioned: part of the forces that act on the block
   passive,  // grouted, stretched by the block as it moves: adds to the resistance only
 };
+
+std::string_view to_string(BoltAction action);  // "active", "passive"
 
 // Water by how full the wetted planes are, 0 (dry) to 1; the analysis says what full means.
 struct WaterFill {

@@ -76,6 +76,7 @@ struct WedgeResult {
   double weight_kN = 0.0;
   WedgeContact contact;  // with active bolts
   WedgeWaterForces water;
+  std::optional<Angle> seismic_trend;  // used; absent without a horizontal seismic load
   // The straight lines used for the planes in contact, at the stress that each bears.
   std::optional<TangentStrength> strength1;
   std::optional<TangentStrength> strength2;

@@ -1,0 +1,14 @@
+// A wedge's result in words and numbers for people.
+#pragma once
+
+#include <string>
+
+#include "brink/mechanics/wedge_equilibrium.hpp"
+
+namespace brink::cli {
+
+// Geometry, forces, mode and factor of safety; the cautions close it. For a wedge that does not
+// form, why.
+std::string wedge_text(const WedgeCase& wedge, const WedgeResult& result);
+
+}  // namespace brink::cli
