@@ -169,11 +169,10 @@ void add_load_options(std::vector<Option>& options, WedgeOptions& o) {
                    "0"));
   options.push_back(force_option("--load",
                                  "A force and the direction in which it pushes the block; a "
-                                 "negative plunge points up. Repeatable.",
+                                 "negative plunge points up.",
                                  o.wedge.loads, group));
   options.push_back(force_option("--bolt",
-                                 "A bolt's force and the direction in which it pulls the block. "
-                                 "Repeatable.",
+                                 "A bolt's force and the direction in which it pulls the block.",
                                  o.wedge.bolts, group));
   Option action;
   action.name = "--bolt-action";

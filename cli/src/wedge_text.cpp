@@ -106,7 +106,7 @@ std::string balance_text(const WedgeResult& r) {
 std::string closing(const WedgeResult& r) {
   std::string text;
   for (const std::string& assumption : r.assumptions) {
-    text += '\n' + paragraph("Taken: " + assumption + ".");
+    text += '\n' + paragraph(assumption + ".");
   }
   return text + '\n' + paragraph(rigid_block_caution()) + paragraph(practice_caution());
 }

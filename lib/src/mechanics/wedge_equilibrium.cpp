@@ -68,16 +68,16 @@ WaterPressures pressures(const WedgeCase& w, const WedgeBlock& block) {
 
 std::string water_assumption(const WedgeCase& w, const WedgeBlock& block, double pressure_kPa) {
   if (std::holds_alternative<WaterPressures>(w.water)) {
-    return "water: the stated mean pressures act over the whole areas of the planes and the crack";
+    return "Water: the stated mean pressures act over the whole areas of the planes and the crack";
   }
   const double fill = std::get<WaterFill>(w.water).fill;
-  if (fill == 0.0) return "water: none (dry)";
+  if (fill == 0.0) return "Water: none (dry)";
   const char* shape = block.cut ? "on both planes and in the crack, a third of the pressure at the "
                                   "crack's lowest corner when the crack is full"
                                 : "on both planes, a sixth of the pressure under a column of water "
                                   "as high as the wedge";
   return fmt::format(
-      "water: a mean pressure of {:.4g} kPa {}, times the fill {}; the fill scales the pressure "
+      "Water: a mean pressure of {:.4g} kPa {}, times the fill {}; the fill scales the pressure "
       "over the whole of the planes, it does not lower a water level",
       pressure_kPa, shape, shortest(fill));
 }

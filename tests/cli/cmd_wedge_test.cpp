@@ -1,0 +1,149 @@
+#include <gtest/gtest.h>
+
+#include <nlohmann/json.hpp>
+
+#include "support/run_brink.hpp"
+
+namespace brink {
+namespace {
+
+using testing::Outcome;
+using testing::run_brink;
+using Words = std::vector<std::string>;
+
+// A wedge that forms, with `more` behind its options.
+Outcome wedge(const Words& more, const Words& size = {"--height", "30"}) {
+  Words words{"wedge",  "--plane1", "45/105",        "--plane2", "70/235",
+              "--face", "65/185",   "--unit-weight", "26"};
+  words.insert(words.end(), size.begin(), size.end());
+  words.insert(words.end(), more.begin(), more.end());
+  return run_brink(words);
+}
+
+nlohmann::json document(Words more) {
+  more.push_back("--json");
+  const Outcome outcome = wedge(more);
+  EXPECT_EQ(outcome.status, 0) << outcome.err;
+  return nlohmann::json::parse(outcome.out);
+}
+
+bool has(const std::string& text, const std::string& part) {
+  return text.find(part) != std::string::npos;
+}
+
+TEST(CmdWedge, TellsModeFactorAndCautions) {
+  const Outcome outcome = wedge({"--friction", "30", "--cohesion", "20"});
+  EXPECT_EQ(outcome.status, 0);
+  EXPECT_EQ(outcome.err, "");
+  EXPECT_TRUE(has(outcome.out, "slides along the line of intersection, on both planes"));
+  EXPECT_TRUE(has(outcome.out, "Factor of safety: "));
+  EXPECT_TRUE(has(outcome.out, "Water: none (dry)."));
+  EXPECT_TRUE(has(outcome.out, "Factors of safety are for one rigid block"));
+}
+
+TEST(CmdWedge, JsonHasEveryKey) {
+  const auto doc = document({"--friction1", "20", "--friction2", "30", "--cohesion", "25",
+                             "--crack", "70/165", "--crack-distance", "12", "--water-fill", "0.5",
+                             "--bolt", "100@10/5", "--load", "50@185/-20"});
+  EXPECT_EQ(doc["command"], "wedge");
+  EXPECT_EQ(doc["inputs"]["loads"][0]["plunge_deg"], -20.0);
+  EXPECT_EQ(doc["inputs"]["water"]["fill"], 0.5);
+  EXPECT_EQ(doc["inputs"]["water_unit_weight_kN_m3"], 9.81);
+  const auto& r = doc["result"];
+  for (const char* key :
+       {"forms", "reason", "line", "volume_m3", "weight_kN", "areas_m2", "mode", "normal_kN",
+        "water_kN", "driving_kN", "resisting_kN", "factor_of_safety"}) {
+    EXPECT_TRUE(r.contains(key)) << key;
+  }
+  EXPECT_EQ(r["mode"], "both");
+  EXPECT_TRUE(r["reason"].is_null());
+  EXPECT_GT(r["areas_m2"]["crack"].get<double>(), 0.0);
+  EXPECT_NEAR(r["factor_of_safety"].get<double>(),
+              r["resisting_kN"].get<double>() / r["driving_kN"].get<double>(), 1e-12);
+}
+
+TEST(CmdWedge, WedgeThatDoesNotFormIsAResult) {
+  const Outcome outcome =
+      run_brink({"wedge", "--plane1", "45/105", "--plane2", "45/105", "--face", "65/185",
+                 "--unit-weight", "26", "--height", "10", "--friction", "30", "--json"});
+  EXPECT_EQ(outcome.status, 0);
+  const auto doc = nlohmann::json::parse(outcome.out);
+  EXPECT_FALSE(doc["result"]["forms"].get<bool>());
+  EXPECT_EQ(doc["result"]["reason"], "the planes are parallel: they meet in no line");
+  EXPECT_TRUE(doc["result"]["factor_of_safety"].is_null());
+}
+
+TEST(CmdWedge, CrackThatMissesIsAWarning) {
+  const Outcome outcome =
+      wedge({"--friction", "30", "--crack", "90/185", "--crack-distance", "500", "--json"});
+  EXPECT_EQ(outcome.status, 0);
+  EXPECT_TRUE(has(outcome.err, "warning: the tension crack, 500 m behind the crest"));
+  const auto doc = nlohmann::json::parse(outcome.out);
+  EXPECT_EQ(doc["warnings"].size(), 1U);
+  EXPECT_EQ(doc["result"]["areas_m2"]["crack"], 0.0);
+}
+
+TEST(CmdWedge, NothingDrivesIsInfinite) {
+  const auto doc = nlohmann::json::parse(
+      run_brink({"wedge", "--plane1", "40/090", "--plane2", "40/270", "--face", "70/180", "--upper",
+                 "10/180", "--unit-weight", "26", "--height", "10", "--friction", "30", "--json"})
+          .out);
+  EXPECT_EQ(doc["result"]["factor_of_safety"], "infinite");
+}
+
+struct BadLine {
+  Words more;
+  std::string names;
+};
+
+TEST(CmdWedge, RefusesContradictionsAndGaps) {
+  const std::vector<BadLine> lines{
+      {{}, "--friction1: is missing"},
+      {{"--friction1", "30"}, "--friction2: is missing"},
+      {{"--friction", "30", "--friction1", "20"}, "--friction1: is given together with --friction"},
+      {{"--friction", "30", "--cohesion", "5", "--cohesion2", "5"}, "--cohesion2"},
+      {{"--friction", "90"}, "--friction"},
+      {{"--friction", "30", "--cohesion", "-1"}, "--cohesion"},
+      {{"--friction", "30", "--height-on-plane1", "20"}, "--height-on-plane1"},
+      {{"--friction", "30", "--crack", "70/165"}, "--crack"},
+      {{"--friction", "30", "--crack-distance", "3"}, "--crack-distance"},
+      {{"--friction", "30", "--water-fill", "1.5"}, "--water-fill"},
+      {{"--friction", "30", "--water-fill", "1", "--water-pressure1", "9"}, "--water-fill"},
+      {{"--friction", "30", "--seismic-trend", "10"}, "--seismic-trend"},
+      {{"--friction", "30", "--bolt", "10@20"}, "--bolt"},
+      {{"--friction", "30", "--load", "-10@20/30"}, "--load"},
+      {{"--friction", "30", "--bolt-action", "fixed"}, "--bolt-action"},
+  };
+  for (const BadLine& line : lines) {
+    const Outcome outcome = wedge(line.more);
+    EXPECT_EQ(outcome.status, 2) << line.names;
+    EXPECT_EQ(outcome.out, "") << line.names;
+    EXPECT_TRUE(has(outcome.err, line.names)) << outcome.err;
+  }
+  EXPECT_EQ(wedge({"--friction", "30"}, {}).status, 2);
+  EXPECT_EQ(wedge({"--friction", "30"}, {"--height", "0"}).status, 2);
+  EXPECT_EQ(run_brink({"wedge", "--plane1", "45/105", "--plane2", "70/235", "--face", "0/185",
+                       "--unit-weight", "26", "--height", "3", "--friction", "30"})
+                .status,
+            2);
+}
+
+TEST(CmdWedge, VerticalLineNeedsASeismicTrend) {
+  const Words base{"wedge",   "--plane1",
+                   "90/045",  "--plane2",
+                   "90/315",  "--face",
+                   "100/180", "--height",
+                   "10",      "--unit-weight",
+                   "26",      "--friction",
+                   "30",      "--seismic-horizontal",
+                   "0.1"};
+  const Outcome without = run_brink(base);
+  EXPECT_EQ(without.status, 2);
+  EXPECT_TRUE(has(without.err, "line of intersection is vertical"));
+  Words with = base;
+  with.insert(with.end(), {"--seismic-trend", "180"});
+  EXPECT_EQ(run_brink(with).status, 0);
+}
+
+}  // namespace
+}  // namespace brink
