@@ -34,16 +34,6 @@ Error option_error(std::string option, std::string_view what, std::string_view a
 const auto kFriction = Interval{0.0, 90.0, false, true, "degrees"};
 const auto kPressure = at_least_value(0.0, "kPa");
 
-Option required(Option option) {
-  option.required = true;
-  return option;
-}
-
-Option with_default(Option option, std::string text) {
-  option.default_text = std::move(text);
-  return option;
-}
-
 void add_geometry_options(std::vector<Option>& options, WedgeOptions& o) {
   const std::string group = "Geometry";
   WedgeGeometry& g = o.wedge.geometry;

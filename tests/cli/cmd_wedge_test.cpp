@@ -86,7 +86,7 @@ TEST(CmdWedge, CrackThatMissesIsAWarning) {
 TEST(CmdWedge, NothingDrivesIsInfinite) {
   const auto doc = nlohmann::json::parse(
       run_brink({"wedge", "--plane1", "40/090", "--plane2", "40/270", "--face", "70/180", "--upper",
-                 "10/180", "--unit-weight", "26", "--height", "10", "--friction", "30", "--json"})
+                 "10/000", "--unit-weight", "26", "--height", "10", "--friction", "30", "--json"})
           .out);
   EXPECT_EQ(doc["result"]["factor_of_safety"], "infinite");
 }

@@ -91,7 +91,7 @@ TEST(DryWedge, PlaneThatStrikesAlongTheFaceBoundsNoBlock) {
 // A level line of intersection daylights under sloping ground; nothing drives the block along it.
 TEST(DryWedge, NothingDrivesALevelWedge) {
   EXPECT_EQ(safety({40_deg, 90_deg}, {40_deg, 270_deg}, 30_deg, 30_deg, {70_deg, 180_deg},
-                   {10_deg, 180_deg}),
+                   {10_deg, 0_deg}),
             std::numeric_limits<double>::infinity());
 }
 
