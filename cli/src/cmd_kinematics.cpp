@@ -1,5 +1,4 @@
 // brink kinematics: which readings and pairs of readings can move on each face.
-#include <algorithm>
 #include <memory>
 #include <ostream>
 #include <utility>
@@ -7,7 +6,6 @@
 #include "brink/base/error.hpp"
 #include "brink/kinematics/kinematics.hpp"
 #include "brink/record/kinematics_document.hpp"
-#include "brink/record/readings_document.hpp"
 #include "brink/sets/sets.hpp"
 #include "commands.hpp"
 #include "exit_status.hpp"
@@ -38,17 +36,12 @@ SetsResult sets_of(const Readings& readings, const KinematicsRun& run) {
 }
 
 Value inputs_value(const Readings& readings, const KinematicsRun& run) {
-  Object inputs = readings_inputs(readings, run.input.reading);
+  Object inputs = input_record(readings, run.input);
   const Object tests = kinematics_inputs(run.tests);
   for (const auto& [key, value] : tests.members()) inputs.add(key, value);
   inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
   inputs.add("find_sets", !run.no_sets && run.input.set_column.empty());
   return inputs;
-}
-
-bool weights_differ(const Readings& readings) {
-  return std::adjacent_find(readings.weights.begin(), readings.weights.end(),
-                            std::not_equal_to<>()) != readings.weights.end();
 }
 
 int run_kinematics(const std::vector<std::string>& files, const KinematicsRun& run,
@@ -70,7 +63,7 @@ int run_kinematics(const std::vector<std::string>& files, const KinematicsRun& r
     streams.out << to_json(result_document("kinematics", inputs_value(readings, run), warnings,
                                            kinematics_result(result, sets)));
   } else {
-    streams.out << kinematics_text(result, sets, weights_differ(readings));
+    streams.out << kinematics_text(result, sets, readings.weights);
   }
   require_usable(readings, run.input);
   return kDone;

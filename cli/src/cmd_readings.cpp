@@ -97,7 +97,7 @@ int run_readings(const std::vector<std::string>& files, const ReadingsRun& run, 
     write_output(run.output.output, readings_csv(readings, table_form(run)), streams.out, files);
   }
   if (run.output.json) {
-    Object inputs = readings_inputs(readings, run.input.reading);
+    Object inputs = input_record(readings, run.input);
     inputs.add("strict", run.input.strict);
     inputs.add("to", run.to ? Value(name_of(*run.to)) : Value());
     streams.out << to_json(result_document("readings", std::move(inputs), readings.warnings,

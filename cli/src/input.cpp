@@ -13,6 +13,7 @@
 #include <system_error>
 
 #include "brink/base/error.hpp"
+#include "brink/record/readings_document.hpp"
 
 namespace brink::cli {
 
@@ -107,6 +108,39 @@ Option only_option(ReadingOptions& target) {
   return option;
 }
 
+constexpr auto kBiasGroup = "Orientation bias";
+
+void add_bias_options(std::vector<Option>& options, BiasOptions& target) {
+  Option traverse;
+  traverse.name = "--traverse";
+  traverse.value = "NAME=KIND@...";
+  traverse.help =
+      "Where readings were taken: NAME=scanline@TREND/PLUNGE, NAME=borehole@TREND/PLUNGE or "
+      "NAME=window@DIP/DIR, NAME as in the readings' column. Readings weigh more the closer their "
+      "plane runs along the traverse. One traverse without NAME= holds for all readings.";
+  traverse.repeatable = true;
+  traverse.group = kBiasGroup;
+  traverse.take = [&target](std::string_view text) {
+    target.traverses.push_back(parse_traverse(text, "--traverse"));
+  };
+  options.push_back(std::move(traverse));
+  Option column = text_option("--traverse-column", "NAME", "Column that names the traverse.",
+                              target.column, kBiasGroup);
+  column.default_text = "traverse";
+  options.push_back(std::move(column));
+  constexpr double right = 90.0;
+  Option blind = angle_option("--blind-angle",
+                              "Planes that meet their traverse at less than this angle weigh as at "
+                              "it, and are pointed out.",
+                              {0.0, right, true, false, "degrees"}, target.blind_angle, kBiasGroup);
+  blind.default_text = "15";
+  options.push_back(std::move(blind));
+  options.push_back(flag_option("--unweighted",
+                                "Every reading weighs the same, whatever its traverse or its "
+                                "column of weights.",
+                                target.unweighted, kBiasGroup));
+}
+
 std::string read_stream(std::istream& in) {
   return {std::istreambuf_iterator<char>(in), std::istreambuf_iterator<char>()};
 }
@@ -185,6 +219,7 @@ void add_input_options(std::vector<Option>& options, InputOptions& target) {
   options.push_back(only_option(target.reading));
   options.push_back(flag_option("--strict", "Makes any rejected line an error, status 1.",
                                 target.strict, kGroup));
+  add_bias_options(options, target.bias);
 }
 
 Option set_column_option(InputOptions& target) {
@@ -222,9 +257,23 @@ Readings load_readings(const std::vector<std::string>& files, const InputOptions
   for (std::size_t i = 0; i < files.size(); ++i) inputs.push_back({files[i], contents[i]});
   Readings readings = read_readings(inputs, options.reading);
   check_set_column(readings, options);
+  weigh_readings(readings, options.bias);
   print_warnings(readings.warnings, output, streams);
   if (!output.quiet) print_rejections(readings, most_rejections, streams);
   return readings;
+}
+
+Object input_record(const Readings& readings, const InputOptions& options) {
+  Object record = readings_inputs(readings, options.reading);
+  Array traverses;
+  for (const Traverse& traverse : options.bias.traverses) {
+    traverses.push_back(traverse_value(traverse));
+  }
+  record.add("traverses", std::move(traverses));
+  record.add("traverse_column", options.bias.column);
+  record.add("blind_angle_deg", options.bias.blind_angle.deg());
+  record.add("unweighted", options.bias.unweighted);
+  return record;
 }
 
 void require_usable(const Readings& readings, const InputOptions& options) {

@@ -4,7 +4,9 @@
 #include <string>
 #include <vector>
 
+#include "brink/readings/bias.hpp"
 #include "brink/readings/readings.hpp"
+#include "brink/record/document.hpp"
 #include "command_line.hpp"
 #include "options.hpp"
 
@@ -14,10 +16,12 @@ struct InputOptions {
   ReadingOptions reading;
   std::string set_column;  // heading of the column that names the sets; empty: none
   bool strict = false;     // any rejected line is an error
+  BiasOptions bias;
 };
 
 // --notation, --strike-rule, --declination, --hole, --reference-line, --overturned, --only,
-// --strict. `target` must outlive the options.
+// --strict, and for orientation bias --traverse, --traverse-column, --blind-angle, --unweighted.
+// `target` must outlive the options.
 void add_input_options(std::vector<Option>& options, InputOptions& target);
 // --set-column, for commands that work with sets.
 Option set_column_option(InputOptions& target);
@@ -25,12 +29,16 @@ Option set_column_option(InputOptions& target);
 // The bytes of a file, or of streams.in for "-". Error(file) where it can't be read or is a folder.
 std::string read_bytes(const std::string& name, Streams& streams);
 
-// Reads the files ("-": standard input, once), checks that the set column is there, and prints
+// Reads the files ("-": standard input, once), checks that the set column is there, weighs the
+// readings for orientation bias, and prints
 // warnings and rejected lines to streams.err unless quiet: up to `most_rejections` of these one by
 // one, the rest as a count.
 Readings load_readings(const std::vector<std::string>& files, const InputOptions& options,
                        const OutputOptions& output, Streams& streams,
                        std::size_t most_rejections = 20);
+
+// What a command that reads files echoes about them: readings_inputs() and the traverses.
+Object input_record(const Readings& readings, const InputOptions& options);
 
 // To be called once the results stand printed: Error(input), and so status 1, where not one reading
 // was usable or, with --strict, where a line was rejected.

@@ -4,11 +4,13 @@
 
 #include <algorithm>
 #include <cstdint>
+#include <functional>
 #include <optional>
 #include <utility>
 #include <vector>
 
 #include "brink/base/number.hpp"
+#include "brink/readings/bias.hpp"
 #include "brink/record/cautions.hpp"
 #include "brink/record/kinematics_document.hpp"
 #include "text_table.hpp"
@@ -33,7 +35,7 @@ std::string percent(const std::optional<double>& share) {
 }
 
 std::string interval(const ModeCount& mode) {
-  if (!mode.share_low || !mode.share_high) return {};
+  if (!mode.share_low || !mode.share_high || mode.admissible == 0) return {};
   return percent(mode.share_low) + " to " + percent(mode.share_high);
 }
 
@@ -86,12 +88,10 @@ std::string mode_table(const FaceKinematics& face, const SetsResult& sets, bool 
 
 std::string notes(const FaceKinematics& face) {
   std::string text = fmt::format(
-      "Wedges: {} a factor of safety below 1 under friction alone, dry, with the planes' wedging "
-      "counted.",
-      counted(face.unstable_dry, "pair that daylights has", "pairs that daylight have"));
-  text += fmt::format(" Blocks: {} to topple on, {} of which {} steep enough to slide.",
-                      counted(face.bases, "base", "bases"), grouped(face.sliding_bases),
-                      face.sliding_bases == 1 ? "is" : "are");
+      "Of the pairs that daylight, {} a factor of safety below 1 under friction alone, dry, the "
+      "planes' wedging counted. {} for blocks to topple on, {} of which {} steep enough to slide.",
+      counted(face.unstable_dry, "has", "have"), counted(face.bases, "base", "bases"),
+      grouped(face.sliding_bases), face.sliding_bases == 1 ? "is" : "are");
   if (face.parallel_pairs > 0) {
     text += fmt::format(" Left out: {}.", counted(face.parallel_pairs, "pair of parallel readings",
                                                   "pairs of parallel readings"));
@@ -128,8 +128,17 @@ std::string set_list(const SetsResult& sets) {
 
 }  // namespace
 
-std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets, bool weighted) {
+std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets,
+                            std::span<const double> weights) {
+  const bool weighted =
+      std::adjacent_find(weights.begin(), weights.end(), std::not_equal_to<>()) != weights.end();
   std::string text = set_list(sets);
+  if (weighted) {
+    text +=
+        paragraph(fmt::format("Weighted readings: {}, which carry as much as {} of equal weight.",
+                              weights.size(), fixed(effective_number(weights), 1))) +
+        '\n';
+  }
   for (const FaceKinematics& face : result.faces) text += face_text(face, result, sets, weighted);
   return text + paragraph(kinematic_caution()) + paragraph(practice_caution());
 }

@@ -1,6 +1,7 @@
 // The kinematic tests as people read them.
 #pragma once
 
+#include <span>
 #include <string>
 
 #include "brink/kinematics/kinematics.hpp"
@@ -9,7 +10,8 @@
 namespace brink::cli {
 
 // One table a face with the sets that lead each mode, what goes with the counts in words, and the
-// cautions. `weighted`: the readings' weights differ, so shares by weight are shown too.
-std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets, bool weighted);
+// cautions. `weights` are the readings'; where they differ shares by weight are shown too.
+std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets,
+                            std::span<const double> weights);
 
 }  // namespace brink::cli

@@ -6,6 +6,7 @@
 
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
+#include "brink/readings/bias.hpp"
 #include "brink/readings/columns.hpp"
 
 namespace brink {
@@ -134,6 +135,18 @@ Object readings_inputs(const Readings& readings, const ReadingOptions& options) 
   return inputs;
 }
 
+Value traverse_value(const Traverse& traverse) {
+  Object object{{"name", traverse.name}, {"kind", name_of(traverse.kind)}};
+  if (traverse.kind == TraverseKind::window) {
+    object.add("dip_deg", traverse.window.dip.deg());
+    object.add("dip_direction_deg", traverse.window.dip_direction.deg());
+  } else {
+    object.add("trend_deg", traverse.line.trend.deg());
+    object.add("plunge_deg", traverse.line.plunge.deg());
+  }
+  return object;
+}
+
 Value readings_result(const Readings& readings) {
   Array rejected;
   for (const Rejection& rejection : readings.rejected) {
@@ -145,6 +158,7 @@ Value readings_result(const Readings& readings) {
   return Object{{"read", std::uint64_t{readings.read}},
                 {"used", std::uint64_t{readings.size()}},
                 {"filtered", std::uint64_t{readings.filtered}},
+                {"effective_number", effective_number(readings.weights)},
                 {"rejected", std::move(rejected)},
                 {"readings", std::move(used)}};
 }

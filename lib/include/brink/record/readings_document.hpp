@@ -5,6 +5,7 @@
 #include <string>
 
 #include "brink/readings/readings.hpp"
+#include "brink/readings/traverse.hpp"
 #include "brink/record/document.hpp"
 
 namespace brink {
@@ -14,9 +15,12 @@ namespace brink {
 // given is null. Commands add their own keys.
 Object readings_inputs(const Readings& readings, const ReadingOptions& options);
 
-// {read, used, filtered, rejected[] {file, line, column, heading, value, reason}, readings[] {file,
-// line, dip_deg, dip_direction_deg, weight, ...}}: the other columns follow by their headings; one
-// whose heading is already a key gets "column " before it.
+// {name, kind, and trend_deg, plunge_deg or dip_deg, dip_direction_deg}.
+Value traverse_value(const Traverse& traverse);
+
+// {read, used, filtered, effective_number, rejected[] {file, line, column, heading, value, reason},
+// readings[] {file, line, dip_deg, dip_direction_deg, weight, ...}}: the other columns follow by
+// their headings; one whose heading is already a key gets "column " before it.
 Value readings_result(const Readings& readings);
 
 // How a table of readings is to be written.
