@@ -8,6 +8,7 @@
 #include <vector>
 
 #include "brink/base/random.hpp"
+#include "brink/base/ties.hpp"
 #include "brink/kinematics/kinematics.hpp"
 #include "brink/kinematics/pairs.hpp"
 
