@@ -252,4 +252,11 @@ std::vector<MeasuredColumn> measure_aperture(const Readings& readings,
   return sets;
 }
 
+JointLengths measure_joints(const Readings& readings, const std::vector<int>& assignment,
+                            const std::vector<SetPlane>& sets, const BiasOptions& options) {
+  return {measure_spacing(readings, assignment, sets, options),
+          measure_persistence(readings, assignment, sets.size()),
+          measure_aperture(readings, assignment, sets.size())};
+}
+
 }  // namespace brink

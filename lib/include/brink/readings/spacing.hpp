@@ -92,4 +92,13 @@ std::vector<MeasuredColumn> measure_aperture(const Readings& readings,
                                              const std::vector<int>& assignment,
                                              std::size_t set_count);
 
+// All of these for the sets of one job.
+struct JointLengths {
+  SpacingResult spacing;
+  std::vector<MeasuredColumn> persistence;
+  std::vector<MeasuredColumn> aperture;
+};
+JointLengths measure_joints(const Readings& readings, const std::vector<int>& assignment,
+                            const std::vector<SetPlane>& sets, const BiasOptions& options);
+
 }  // namespace brink
