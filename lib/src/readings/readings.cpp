@@ -4,13 +4,13 @@
 
 #include <algorithm>
 #include <cmath>
-#include <map>
 #include <memory>
 #include <utility>
 
 #include "brink/base/digest.hpp"
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
+#include "brink/readings/ags4.hpp"
 #include "brink/readings/columns.hpp"
 #include "brink/readings/csv.hpp"
 #include "row_planes.hpp"
@@ -161,10 +161,16 @@ void check_strike_rule(const Columns& columns, const ReadingOptions& options,
               headings.cells[column], "one and the same rule");
 }
 
+std::unique_ptr<RowSource> open_rows(std::string_view text, const std::string& name) {
+  if (is_ags4(text)) return std::make_unique<Ags4Reader>(text, name);
+  return std::make_unique<CsvReader>(text, name);
+}
+
 void ReadingCollector::read_file(const InputBytes& file) {
   readings_.files.push_back({file.name, sha256_hex(file.bytes)});
   const Text text(file.bytes, file.name);
-  CsvReader rows(text.view(), file.name);
+  const std::unique_ptr<RowSource> source = open_rows(text.view(), file.name);
+  RowSource& rows = *source;
   const Row& headings = rows.headings();
   const Columns columns = understand_columns(headings, file.name, options_.notation);
   check_strike_rule(columns, options_, file.name, headings);
