@@ -5,6 +5,7 @@
 #include <ostream>
 
 #include "brink/base/error.hpp"
+#include "brink/readings/checks.hpp"
 #include "brink/record/readings_document.hpp"
 #include "commands.hpp"
 #include "input.hpp"
@@ -92,7 +93,10 @@ std::string summary(const Readings& readings, const ReadingOptions& options) {
 int run_readings(const std::vector<std::string>& files, const ReadingsRun& run, Streams& streams) {
   check_output(run);
   // The rejected lines stand in the result; standard error gets their number.
-  const Readings readings = load_readings(files, run.input, run.output, streams, 0);
+  Readings readings = load_readings(files, run.input, run.output, streams, 0);
+  const std::vector<std::string> doubts = check_readings(readings);
+  print_warnings(doubts, run.output, streams);
+  readings.warnings.insert(readings.warnings.end(), doubts.begin(), doubts.end());
   if (!run.output.output.empty() && readings.size() > 0) {
     write_output(run.output.output, readings_csv(readings, table_form(run)), streams.out, files);
   }
@@ -117,9 +121,14 @@ Command readings_command() {
   command.name = "readings";
   command.summary = "Reads, checks and converts orientation readings";
   command.description =
-      "Reads CSV files (comma, semicolon or tab) by their headings and says how many readings were "
-      "used, which lines were not, and why. With -o the readings are written as one table, in any "
-      "notation.";
+      "Reads CSV files (comma, semicolon or tab) and the discontinuities of AGS4 files by their "
+      "headings and says how many readings were used, which lines were not, and why. Warns of what "
+      "a "
+      "careful person would look at twice: rows that stand twice, dip and direction exchanged, an "
+      "observer whose directions are turned about, rounded values, a set that one traverse alone "
+      "meets, readings in a traverse's blind zone. With -o the readings are written as one table, "
+      "in "
+      "any notation.";
   command.positionals = Positionals::files;
   add_input_options(command.options, run->input);
   add_output_options(command.options, run->output);

@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <optional>
 #include <set>
 #include <span>
@@ -334,10 +335,12 @@ void Ags4Reader::join_group(std::string_view name, std::span<const std::string_v
   joined.cell_count = columns.size();
   const std::size_t top = group->find("HORN_TOP");
   const std::size_t base = group->find("HORN_BASE");
+  constexpr double kInfinity = std::numeric_limits<double>::infinity();
   for (const Ags4Group::Line& line : group->data) {
     const Fields fields = split_fields(line.text);
-    Stretch stretch{
-        parse_decimal(field_of(fields, top)), parse_decimal(field_of(fields, base)), {}};
+    Stretch stretch{parse_decimal(field_of(fields, top)).value_or(-kInfinity),
+                    parse_decimal(field_of(fields, base)).value_or(kInfinity),
+                    {}};
     for (const std::size_t column : columns) stretch.cells.push_back(field_of(fields, column));
     joined.by_location[field_of(fields, id)].push_back(std::move(stretch));
   }
@@ -387,14 +390,16 @@ void Ags4Reader::read_range(Row& row, std::string_view heading, bool azimuth) {
 void Ags4Reader::join(Row& row) const {
   const std::size_t location = disc_->find("LOCA_ID");
   const std::size_t depth = disc_->find("DISC_TOP");
-  const auto at_m = depth == Ags4Group::npos ? std::nullopt : parse_decimal(row.cells[depth + 1]);
+  // Where the depth is not a number, the location's first stretch is taken.
+  const double at_m = depth == Ags4Group::npos
+                          ? std::nan("")
+                          : parse_decimal(row.cells[depth + 1]).value_or(std::nan(""));
   for (const JoinedGroup& joined : joined_) {
     const auto found = joined.by_location.find(row.cells[location + 1]);
     const Stretch* here = nullptr;
     if (found != joined.by_location.end()) {
       for (const Stretch& stretch : found->second) {
-        const bool outside = at_m && ((stretch.top_m && *at_m < *stretch.top_m) ||
-                                      (stretch.base_m && *at_m > *stretch.base_m));
+        const bool outside = at_m < stretch.top_m || at_m > stretch.base_m;
         if (!outside && here == nullptr) here = &stretch;
       }
     }

@@ -4,7 +4,6 @@
 
 #include <deque>
 #include <map>
-#include <optional>
 #include <span>
 #include <string>
 #include <string_view>
@@ -64,8 +63,8 @@ class Ags4Reader final : public RowSource {
  private:
   // What one row of LOCA or HORN says, and of which stretch of which location.
   struct Stretch {
-    std::optional<double> top_m;
-    std::optional<double> base_m;
+    double top_m;                    // minus infinity where not stated
+    double base_m;                   // infinity where not stated
     std::vector<std::string> cells;  // in the order of the joined headings
   };
   // The group's rows by location.
