@@ -51,15 +51,19 @@ std::vector<std::uint64_t> signatures(const Readings& readings, const ExtraColum
   return marks;
 }
 
-// Chance that two readings drawn at random have the same signature.
-double collision_chance(const std::vector<std::uint64_t>& marks) {
+// Number of pairs of readings with the same signature. Summed in the order of the readings: a hash
+// map's own order is nobody's contract.
+double equal_pairs(const std::vector<std::uint64_t>& marks) {
   std::unordered_map<std::uint64_t, double> counts;
   for (const std::uint64_t mark : marks) counts[mark] += 1.0;
-  // Summed in the order of the readings: a hash map's own order is nobody's contract.
   double pairs = 0.0;
   for (const std::uint64_t mark : marks) pairs += counts[mark] - 1.0;
-  const auto n = static_cast<double>(marks.size());
-  return n < 2.0 ? 0.0 : pairs / (n * (n - 1.0));
+  return pairs / 2.0;
+}
+
+double all_pairs(std::size_t count) {
+  const auto n = static_cast<double>(count);
+  return n * (n - 1.0) / 2.0;
 }
 
 std::string cell_of(const Readings& readings, std::string_view heading, std::size_t i) {
@@ -89,7 +93,7 @@ std::vector<std::string> repeated_ids(const Readings& readings, const ExtraColum
 
 // Rows equal in every column, the position included. Pairs at one position may be equal by chance,
 // where positions are coarse and joints alike: the number found must be beyond what the share of
-// equal readings anywhere makes likely.
+// equal pairs at different positions makes likely.
 std::vector<std::string> repeated_positions(const Readings& readings,
                                             const ExtraColumn& positions) {
   const std::vector<std::uint64_t> rest = signatures(readings, &positions);
@@ -99,19 +103,24 @@ std::vector<std::string> repeated_positions(const Readings& readings,
     places[fmt::format("{}\n{}", cell_of(readings, "traverse", i), positions.cells[i])].push_back(
         i);
   }
-  double pairs = 0.0;
+  double pairs_here = 0.0;
+  double equal_here = 0.0;
   std::vector<std::size_t> repeated;
   for (const auto& [place, indices] : places) {
-    const auto n = static_cast<double>(indices.size());
-    pairs += n * (n - 1.0) / 2.0;
+    pairs_here += all_pairs(indices.size());
     for (std::size_t b = 1; b < indices.size(); ++b) {
-      const bool again = std::any_of(indices.begin(), indices.begin() + static_cast<long>(b),
-                                     [&](std::size_t a) { return rest[a] == rest[indices[b]]; });
-      if (again) repeated.push_back(indices[b]);
+      const auto again =
+          std::count_if(indices.begin(), indices.begin() + static_cast<std::ptrdiff_t>(b),
+                        [&](std::size_t a) { return rest[a] == rest[indices[b]]; });
+      equal_here += static_cast<double>(again);
+      if (again > 0) repeated.push_back(indices[b]);
     }
   }
   if (repeated.empty()) return {};
-  if (poisson_tail(repeated.size(), pairs * collision_chance(rest)) >= kRare) return {};
+  const double pairs_elsewhere = all_pairs(readings.size()) - pairs_here;
+  const double chance =
+      pairs_elsewhere > 0.0 ? (equal_pairs(rest) - equal_here) / pairs_elsewhere : 0.0;
+  if (poisson_tail(repeated.size(), pairs_here * chance) >= kRare) return {};
   std::sort(repeated.begin(), repeated.end());
   return {fmt::format("{}: {} equal in every column to a row before, position included",
                       name_readings(readings, repeated),
@@ -151,10 +160,10 @@ std::vector<Block> repeated_blocks(const std::vector<std::uint64_t>& marks, std:
 // from the readings themselves.
 std::vector<std::string> repeated_rows(const Readings& readings) {
   const std::vector<std::uint64_t> marks = signatures(readings, nullptr);
-  const double p = collision_chance(marks);
-  const auto n = static_cast<double>(marks.size());
-  if (marks.size() < 2 || p >= 0.5) return {};
-  const double runs = n * n / 2.0;
+  if (marks.size() < 2) return {};
+  const double runs = all_pairs(marks.size());
+  const double p = equal_pairs(marks) / runs;
+  if (p >= 0.5) return {};
   const double length = p <= 0.0 ? 2.0 : std::ceil(std::log(runs / kRare) / -std::log(p));
   const auto least = static_cast<std::size_t>(std::max(2.0, length));
   std::vector<std::string> warnings;

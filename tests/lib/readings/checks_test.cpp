@@ -39,15 +39,15 @@ struct Set {
   double dip, direction;
 };
 
-// About 8 degrees of scatter, whole degrees, every fourth reading a stray.
-Plane scattered(const Set& set, std::uint64_t seed, std::uint64_t i) {
-  if (i % 10 == 9) {
-    return {Angle::degrees(std::lround(acos(draw(seed, 20, i)).deg())),
+// About 8 degrees of scatter, whole degrees, every tenth reading a stray unless said otherwise.
+Plane scattered(const Set& set, std::uint64_t seed, std::uint64_t i, std::uint64_t strays = 10) {
+  if (i % strays == strays - 1) {
+    return {Angle::degrees(std::round(acos(draw(seed, 20, i)).deg())),
             Angle::degrees(std::floor(360.0 * draw(seed, 21, i)))};
   }
   const double dip = std::min(89.0, std::max(1.0, set.dip + 8.0 * gaussian(seed, 5, i)));
   const double direction = set.direction + 8.0 / sin(Angle::degrees(dip)) * gaussian(seed, 6, i);
-  return {Angle::degrees(std::lround(dip)), wrap_360(Angle::degrees(std::lround(direction)))};
+  return {Angle::degrees(std::round(dip)), wrap_360(Angle::degrees(std::round(direction)))};
 }
 
 std::string row_of(const Plane& plane) {
@@ -85,12 +85,16 @@ TEST(Checks, HonestReadingsAreLeftInPeace) {
 }
 
 TEST(Checks, SwappedDipAndDirectionAreNamed) {
-  Field field = three_sets(1, 240);
-  field.rows[30] = "20,36";  // of the set 35/020
-  field.rows[77] = "21,34";
+  Field field;
+  for (std::uint64_t i = 0; i < 240; ++i) {
+    const Set sets[] = {{70, 25}, {60, 255}, {35, 200}};
+    field.rows.push_back(row_of(scattered(sets[i % 3], 1, i, 40)));
+  }
+  field.rows[30] = "24,71";
+  field.rows[77] = "27,69";
   const auto warnings = check_swapped(field.read());
-  EXPECT_TRUE(mentions(warnings, "t.csv:32: 20/036")) << ::testing::PrintToString(warnings);
-  EXPECT_TRUE(mentions(warnings, "t.csv:79: 21/034"));
+  EXPECT_TRUE(mentions(warnings, "t.csv:32: 24/071")) << ::testing::PrintToString(warnings);
+  EXPECT_TRUE(mentions(warnings, "t.csv:79: 27/069"));
   EXPECT_LE(warnings.size(), 3U);
 }
 

@@ -1,9 +1,9 @@
 // What a careful person notices when leafing through readings: slips of the hand, habits of the
 // eye, and gaps of the method. Every check warns and names lines; none changes data.
 //
-// Each threshold is set by the chance of a false alarm on readings that have nothing wrong: about
-// one in twenty files for the checks of single readings and observers, one in a thousand for the
-// others. The argument stands at each check in the source.
+// Each threshold is set by the chance of a false alarm on readings that have nothing wrong: below
+// one in two files for exchanged numbers (a bound; far fewer in practice), one in twenty for turned
+// observers, one in a thousand for the others. The argument stands at each check in the source.
 #pragma once
 
 #include <span>
@@ -21,8 +21,9 @@ std::vector<std::string> check_readings(const Readings& readings);
 // id; where there are neither positions nor ids, whole blocks of rows that repeat another block.
 std::vector<std::string> check_duplicates(const Readings& readings);
 
-// Readings whose dip and direction would fit the others far better in each other's place. Up to
-// 20,000 readings: more come from instruments, not from pencils.
+// Readings whose dip and direction would fit the others far better in each other's place. Found
+// where strays are few: among many, an exchanged reading is one more stray. Up to 20,000 readings:
+// more come from instruments, not from pencils.
 std::vector<std::string> check_swapped(const Readings& readings);
 
 // Observers (column observer, else traverse, else file) whose directions fit the others' readings
