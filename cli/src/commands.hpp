@@ -12,11 +12,13 @@ Command sets_command();
 Command kinematics_command();
 Command stereonet_command();
 Command wedge_command();
+Command plane_command();
+Command topple_command();
 Command report_command();
 
 // In the order of the help. A command joins the list when it works.
 inline std::vector<Command> all_commands() {
-  return {readings_command(), wedge_command()};
+  return {readings_command(), wedge_command(), plane_command()};
 }
 
 }  // namespace brink::cli

@@ -74,7 +74,9 @@ SectionShape section_shape(const Plane& plane, const Face& face, const Plane& up
   const Vector3 ground_normal = upward_normal(upper);
   const Vector3 slide = dip_vector(plane.dip, shape.azimuth);
   shape.plane_dip = plane.dip;
-  shape.face_dip = trace_dip(face_normal, shape.azimuth);
+  // Square to the face nothing is apparent: the dip stays as it was typed.
+  const bool square = shape.azimuth == wrap_360(face.dip_direction);
+  shape.face_dip = square ? face.dip : trace_dip(face_normal, shape.azimuth);
   shape.upper_dip = trace_dip(ground_normal, shape.azimuth);
   shape.height_m = height_m;
   shape.reason = why_no_block(shape, slide, face_normal, ground_normal);
