@@ -74,7 +74,7 @@ std::string_view to_string(BlockMode mode) {
   return "slides";
 }
 
-Value topple_inputs(const ToppleInput& input, const std::optional<ToppleGeometry>& geometry) {
+Object topple_inputs(const ToppleInput& input, const std::optional<ToppleGeometry>& geometry) {
   return Object{{"geometry", geometry_value(geometry)},
                 {"columns", columns_value(input.columns)},
                 {"unit_weight_kN_m3", input.unit_weight_kN_m3},

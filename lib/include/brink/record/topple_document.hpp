@@ -7,7 +7,7 @@
 namespace brink {
 
 // Every value that went in, defaults too; the geometry where the blocks were made from one.
-Value topple_inputs(const ToppleInput& input, const std::optional<ToppleGeometry>& geometry);
+Object topple_inputs(const ToppleInput& input, const std::optional<ToppleGeometry>& geometry);
 
 // Blocks by number, from 1 at the toe.
 Value topple_value(const ToppleResult& result);
