@@ -220,9 +220,9 @@ class Painter {
   cairo_t* context() { return cr_.get(); }
 
   void paint_page(const Picture& picture) {
+    // All of it, the last dots of a page that isn't a whole number of them wide too.
     cairo_set_source_rgb(cr_.get(), 1.0, 1.0, 1.0);
-    cairo_rectangle(cr_.get(), 0.0, 0.0, picture.width_mm, picture.height_mm);
-    cairo_fill(cr_.get());
+    cairo_paint(cr_.get());
     cairo_set_line_join(cr_.get(), CAIRO_LINE_JOIN_ROUND);
     paint_group(picture.content);
   }

@@ -214,12 +214,16 @@ std::vector<double> usual_levels(double peak) {
   if (peak <= 2.0) return peak > 1.5 ? std::vector<double>{1.5} : std::vector<double>{};
   constexpr std::size_t kMost = 5;
   std::vector<double> levels;
-  for (double level = 2.0; level < peak; level *= 2.0) levels.push_back(level);
-  if (levels.size() <= kMost) return levels;
-  std::vector<double> fewer;
-  for (std::size_t i = 0; i < levels.size(); i += 2) fewer.push_back(levels[i]);
-  if (fewer.size() > kMost) fewer.resize(kMost);
-  return fewer;
+  for (double level = 2.0; level < peak; level *= 2.0) {
+    levels.push_back(level);
+    if (1.5 * level < peak) levels.push_back(1.5 * level);
+  }
+  // Every second, fourth ... where there are too many.
+  std::size_t step = 1;
+  while ((levels.size() + step - 1) / step > kMost) step *= 2;
+  std::vector<double> chosen;
+  for (std::size_t i = 0; i < levels.size(); i += step) chosen.push_back(levels[i]);
+  return chosen;
 }
 
 }  // namespace brink

@@ -228,11 +228,16 @@ TEST(Contour, NothingAboveGivesNothingAndAllAboveGivesTheRim) {
   EXPECT_EQ(level_area(grid, 0.1)[0].size(), 80u);
 }
 
-TEST(Contour, UsualLevelsDouble) {
-  EXPECT_EQ(usual_levels(10.0), (std::vector<double>{2, 4, 8}));
+TEST(Contour, UsualLevelsAreAtMostFive) {
+  EXPECT_EQ(usual_levels(7.0), (std::vector<double>{2, 3, 4, 6}));
+  EXPECT_EQ(usual_levels(20.0), (std::vector<double>{2, 4, 8, 16}));
   EXPECT_EQ(usual_levels(1.8), (std::vector<double>{1.5}));
   EXPECT_TRUE(usual_levels(1.2).empty());
-  EXPECT_EQ(usual_levels(100.0), (std::vector<double>{2, 8, 32}));
+  for (double peak = 1.0; peak < 1e5; peak *= 1.1) {
+    const auto levels = usual_levels(peak);
+    EXPECT_LE(levels.size(), 5u);
+    for (const double level : levels) EXPECT_LT(level, peak);
+  }
 }
 
 }  // namespace

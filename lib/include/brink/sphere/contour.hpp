@@ -26,8 +26,8 @@ std::vector<LevelLine> level_lines(const DensityGrid& grid, double level);
 // rule.
 std::vector<std::vector<Vector3>> level_area(const DensityGrid& grid, double level);
 
-// Levels fit for a drawing: 2, 4, 8 ... times uniform below the peak, at most five (every second
-// one where there would be more); 1.5 for a peak between 1.5 and 2; none for a flatter density,
+// Levels fit for a drawing, at most five: 2, 3, 4, 6, 8, 12 ... times uniform below the peak, or
+// every second, fourth ... of these; 1.5 for a peak between 1.5 and 2; none for a flatter density,
 // whose contours would mean nothing.
 std::vector<double> usual_levels(double peak);
 
