@@ -23,18 +23,22 @@ double width_of(const RimLabel& label, const std::string& words) {
   return measure({{}, words, label.style, Anchor::start, 0.0, 1}).width_mm;
 }
 
-// The end of the name is left out, whole UTF-8 characters at a time, until the label fits.
-std::string fitted(const RimLabel& label, double room_mm) {
-  std::string name = label.name;
-  std::string words = name + "  " + label.orientation;
-  while (!name.empty() && width_of(label, words) > room_mm) {
-    while (!name.empty() && (static_cast<unsigned char>(name.back()) & 0xC0U) == 0x80U) {
-      name.pop_back();
+// `words` without its end, whole UTF-8 characters at a time, so that they fit.
+std::string cut_to(const RimLabel& label, const std::string& words, double room_mm) {
+  if (width_of(label, words) <= room_mm) return words;
+  std::string kept = words;
+  while (!kept.empty()) {
+    while (!kept.empty() && (static_cast<unsigned char>(kept.back()) & 0xC0U) == 0x80U) {
+      kept.pop_back();
     }
-    if (!name.empty()) name.pop_back();
-    words = name + "…  " + label.orientation;
+    if (!kept.empty()) kept.pop_back();
+    if (width_of(label, kept + "…") <= room_mm) break;
   }
-  return words;
+  return kept + "…";
+}
+
+std::string one_line(const RimLabel& label) {
+  return label.name + "  " + label.orientation;
 }
 
 bool on_right(Angle azimuth) {
@@ -75,6 +79,54 @@ double inner_x(const NetFrame& frame, double y, double height, bool right) {
   double across = nearest < reach ? std::sqrt(reach * reach - nearest * nearest) : 0.0;
   if (y < frame.centre.y_mm) across = std::max(across, kNorthHalf_mm);
   return frame.centre.x_mm + (right ? across : -across);
+}
+
+// The labels of one side, from the top down.
+struct Side {
+  const NetFrame& frame;
+  const std::vector<RimLabel>& labels;
+  const std::vector<Angle>& chosen;
+  const std::vector<std::size_t>& here;
+  bool right;
+  double edge_mm;
+  double top_mm, bottom_mm;
+
+  double symbol(std::size_t k) const { return labels[here[k]].symbol ? kSymbol_mm : 0.0; }
+  double room(std::size_t k, double x) const { return std::abs(edge_mm - x) - symbol(k); }
+};
+
+std::vector<double> heights_of(const Side& side, double size) {
+  std::vector<double> wanted;
+  for (const std::size_t i : side.here) wanted.push_back(wanted_y(side.frame, side.chosen[i]));
+  return spread_out(wanted, size, side.top_mm, side.bottom_mm);
+}
+
+// All of them in boxes of `lines` lines; nothing where one needs more.
+std::optional<std::vector<PlacedLabel>> place_in(const Side& side, int lines) {
+  double size = 0.0;
+  for (const std::size_t i : side.here) size = std::max(size, lines * line_height(side.labels[i]));
+  const auto places = heights_of(side, size);
+  std::vector<PlacedLabel> placed;
+  for (std::size_t k = 0; k < side.here.size(); ++k) {
+    const RimLabel& label = side.labels[side.here[k]];
+    const double x = inner_x(side.frame, places[k], size, side.right);
+    const double room = side.room(k, x);
+    PlacedLabel p{side.here[k], side.chosen[side.here[k]], side.right, {x, places[k]}, 0.0,
+                  size,         one_line(label),           {}};
+    if (width_of(label, p.first) > room) {
+      if (lines == 1) return std::nullopt;
+      p.first = cut_to(label, label.name, room);
+      p.second = label.orientation;
+    }
+    p.width_mm = side.symbol(k) + std::max(width_of(label, p.first), width_of(label, p.second));
+    placed.push_back(std::move(p));
+  }
+  return placed;
+}
+
+std::vector<PlacedLabel> place_side(const Side& side) {
+  if (auto placed = place_in(side, 1)) return *std::move(placed);
+  return *place_in(side, 2);
 }
 
 struct Block {
@@ -118,33 +170,17 @@ std::vector<PlacedLabel> place_rim_labels(const NetFrame& frame,
   std::vector<PlacedLabel> placed;
   for (const bool right : {false, true}) {
     std::vector<std::size_t> here;
-    double height = 0.0;
     for (std::size_t i = 0; i < labels.size(); ++i) {
-      if (on_right(chosen[i]) != right) continue;
-      here.push_back(i);
-      height = std::max(height, line_height(labels[i]));
+      if (on_right(chosen[i]) == right) here.push_back(i);
     }
     std::stable_sort(here.begin(), here.end(), [&](std::size_t a, std::size_t b) {
       return wanted_y(frame, chosen[a]) < wanted_y(frame, chosen[b]);
     });
-    std::vector<double> wanted;
-    for (const std::size_t i : here) wanted.push_back(wanted_y(frame, chosen[i]));
-    const auto places = spread_out(wanted, height, top_mm, bottom_mm);
-    for (std::size_t k = 0; k < here.size(); ++k) {
-      const RimLabel& label = labels[here[k]];
-      const double x = inner_x(frame, places[k], height, right);
-      const double symbol = label.symbol ? kSymbol_mm : 0.0;
-      const double edge = right ? frame.centre.x_mm + frame.radius_mm + kGap_mm + room_right_mm
-                                : frame.centre.x_mm - frame.radius_mm - kGap_mm - room_left_mm;
-      const double room = std::abs(edge - x) - symbol;
-      const std::string words = fitted(label, room);
-      placed.push_back({here[k],
-                        chosen[here[k]],
-                        right,
-                        {x, places[k]},
-                        symbol + width_of(label, words),
-                        height,
-                        words});
+    const double edge = right ? frame.centre.x_mm + frame.radius_mm + kGap_mm + room_right_mm
+                              : frame.centre.x_mm - frame.radius_mm - kGap_mm - room_left_mm;
+    for (PlacedLabel& label :
+         place_side({frame, labels, chosen, here, right, edge, top_mm, bottom_mm})) {
+      placed.push_back(std::move(label));
     }
   }
   return placed;
@@ -157,22 +193,22 @@ Group draw_rim_labels(const NetFrame& frame, const std::vector<RimLabel>& labels
     const RimLabel& label = labels[p.label];
     const Point rim = beyond_rim(frame, p.azimuth, 0.4);
     const Point inner{p.at.x_mm + (p.right ? -0.7 : 0.7), p.at.y_mm};
-    const double moved = std::hypot(rim.x_mm - inner.x_mm, rim.y_mm - inner.y_mm);
-    if (moved > kGap_mm + 2.0) {
+    if (std::hypot(rim.x_mm - inner.x_mm, rim.y_mm - inner.y_mm) > kGap_mm + 2.0) {
       add(group, segment(rim, inner, {label.style.colour, style::kThin_mm, {}, false}));
     }
-    const double left = p.right ? p.at.x_mm : p.at.x_mm - p.width_mm;
-    double text_left = left;
+    const double first_y = p.at.y_mm - (p.second.empty() ? 0.0 : 0.5 * line_height(label));
+    const double symbol = label.symbol ? kSymbol_mm : 0.0;
+    const double drop = 0.36 * label.style.size_mm;
+    const Anchor anchor = p.right ? Anchor::start : Anchor::end;
+    const double text_x = p.right ? p.at.x_mm + symbol : p.at.x_mm;
     if (label.symbol) {
-      add(group, Symbols{*label.symbol, 2.0, 0.4, label.style.colour, {{left + 1.1, p.at.y_mm}}});
-      text_left += kSymbol_mm;
+      const double left = p.right ? p.at.x_mm : p.at.x_mm - symbol - width_of(label, p.first);
+      add(group, Symbols{*label.symbol, 2.0, 0.4, label.style.colour, {{left + 1.1, first_y}}});
     }
-    add(group, Text{{text_left, p.at.y_mm + 0.36 * label.style.size_mm},
-                    p.text,
-                    label.style,
-                    Anchor::start,
-                    0.0,
-                    1});
+    add(group, Text{{text_x, first_y + drop}, p.first, label.style, anchor, 0.0, 1});
+    if (p.second.empty()) continue;
+    add(group,
+        Text{{text_x, first_y + line_height(label) + drop}, p.second, label.style, anchor, 0.0, 1});
   }
   return group;
 }

@@ -8,6 +8,7 @@
 #include "brink/plot/mode_net.hpp"
 #include "brink/plot/style.hpp"
 #include "brink/plot/words.hpp"
+#include "brink/record/cautions.hpp"
 
 namespace brink::plot {
 
@@ -22,9 +23,7 @@ std::string caution_words(const Readings& readings) {
   if (lines_are_thinned(readings)) {
     words += fmt::format("{} lines are drawn; the counts are of all pairs. ", grouped(kMostLines));
   }
-  return words +
-         "Screening only: persistence, water, cohesion and the wedging of blocks are left out. It "
-         "does not replace a competent person's judgement of the rock.";
+  return words + std::string(kinematic_caution()) + " " + std::string(practice_caution());
 }
 
 // One line of up to `width`, in a smaller size where it is longer, cut only where even that fails.
@@ -122,13 +121,13 @@ Picture face_sheet(const NetContent& content, Projection projection, const Sheet
     add(page, draw_mode_net({content.readings, content.sets, kinematics.options, tested, kModes[i]},
                             {centre, 23.5, projection}));
   }
-  add(page, draw_key(content, {kMargin_mm, 184.0}, 155.0));
-  Text caution{{kMargin_mm, 197.0},
+  add(page, draw_key(content, {kMargin_mm, 181.5}, 155.0));
+  Text caution{{kMargin_mm, 193.5},
                caution_words(content.readings),
                style::text(style::kNote_mm, style::kMuted),
                Anchor::start,
                width,
-               2};
+               3};
   add(page, caution);
   return picture;
 }

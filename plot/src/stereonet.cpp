@@ -35,16 +35,32 @@ Group draw_density(const NetContent& content, const NetFrame& frame) {
       for (const Step& step : outline(frame, loop)) area.steps.push_back(step);
     }
     add(group, std::move(area));
-    Path lines{{}, Stroke{style::kTintEdge, style::kHairline_mm, {}, false}, {}};
-    for (const LevelLine& line : level_lines(*content.density, content.levels[i])) {
+  }
+  return group;
+}
+
+// Lines go over the poles where those are so many that they would hide them.
+constexpr std::size_t kCrowd = 3000;
+
+Group draw_contours(const NetContent& content, const NetFrame& frame) {
+  const bool crowded = content.readings.size() > kCrowd;
+  Path lines{{},
+             Stroke{crowded ? style::kInk : style::kTintEdge,
+                    crowded ? style::kThin_mm : style::kHairline_mm,
+                    {},
+                    false},
+             {}};
+  for (const double level : content.levels) {
+    for (const LevelLine& line : level_lines(*content.density, level)) {
       for (const auto& piece : line.pieces) {
         std::vector<Point> points;
         for (const Vector3& v : piece) points.push_back(on_page(frame, v));
         for (const Step& step : polyline(points, {}).steps) lines.steps.push_back(step);
       }
     }
-    add(group, std::move(lines));
   }
+  Group group;
+  add(group, std::move(lines));
   return group;
 }
 
@@ -219,7 +235,10 @@ Group draw_stereonet(const NetContent& content, const NetFrame& frame, const Lab
   add(group, draw_mean_planes(content, frame));
   add(group, draw_faces(content, frame));
   add(group, rim_and_north(frame));
+  const bool crowded = content.readings.size() > kCrowd;
+  if (content.density != nullptr && !crowded) add(group, draw_contours(content, frame));
   add(group, draw_poles(content, frame));
+  if (content.density != nullptr && crowded) add(group, draw_contours(content, frame));
   add(group, draw_means(content, frame));
   const auto labels = rim_labels(content);
   add(group, draw_rim_labels(frame, labels,

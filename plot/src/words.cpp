@@ -96,7 +96,11 @@ std::string_view projection_name(Projection projection) {
 CountInWords count_in_words(Mode mode, const ModeCount& counts, const SetsResult& sets,
                             bool region_is_empty) {
   const bool pairs = of_pairs(mode);
-  const char* what = pairs ? "pairs" : "readings";
+  if (counts.tested == 0) {
+    return {pairs ? "no pair of readings" : "no reading", "there is nothing to test", false};
+  }
+  const std::string what =
+      std::string(pairs ? "pair" : "reading") + (counts.tested == 1 ? "" : "s");
   if (counts.admissible == 0) {
     return {fmt::format("none of {} {}", grouped(counts.tested), what),
             region_is_empty ? "no direction is free to move on this face"

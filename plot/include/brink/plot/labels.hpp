@@ -26,7 +26,8 @@ struct PlacedLabel {
   Point at;               // inner end of the text's box, half-way up
   double width_mm = 0.0;  // of the box, symbol included
   double height_mm = 0.0;
-  std::string text;  // name and orientation as they fit
+  std::string first;   // name and orientation, or the name alone
+  std::string second;  // the orientation, where both don't fit on one line
 };
 
 // Each label takes the end with more room, then stands beside the rim as near to its end as the
