@@ -59,6 +59,9 @@ std::string size_text(const WedgeResult& r) {
       fixed(r.line->trend.deg(), 1), fixed(r.line->plunge.deg(), 1), fixed(b.height_m, 2),
       fixed(b.total_height_m, 2), fixed(b.volume_m3, b.volume_m3 < 100.0 ? 2 : 0),
       kilonewtons(r.weight_kN));
+  if (r.surcharge_kN > 0.0) {
+    text += fmt::format("  surcharge             {} kN\n", kilonewtons(r.surcharge_kN));
+  }
   if (b.cut) {
     text += fmt::format("  tension crack         {} m2, {} m deep\n", fixed(b.areas.crack_m2, 1),
                         fixed(b.crack_depth_m, 2));
@@ -103,6 +106,47 @@ std::string balance_text(const WedgeResult& r) {
   return text;
 }
 
+std::string directions_text(const WedgeTarget& target) {
+  std::string text = "among all directions that point into the face, upward ones too";
+  if (target.least_plunge.deg() > -90.0 || target.greatest_plunge.deg() < 90.0) {
+    text = fmt::format("among directions that point into the face and plunge {} to {} degrees",
+                       shortest(target.least_plunge.deg()), shortest(target.greatest_plunge.deg()));
+  }
+  return text;
+}
+
+std::string least_bolt_text(const WedgeSupport& support) {
+  const std::string_view action = to_string(support.action);
+  const std::string safety = shortest(support.target.factor_of_safety);
+  if (!support.least) {
+    return fmt::format("No {} bolt brings the factor of safety to {}, {}.", action, safety,
+                       directions_text(support.target));
+  }
+  if (!support.least->direction) {
+    return fmt::format("The factor of safety is {} or more without another bolt.", safety);
+  }
+  const Line& line = *support.least->direction;
+  return fmt::format(
+      "Least {} bolt force for a factor of safety of {}: {} kN towards {}/{} "
+      "(trend/plunge{}), {}.",
+      action, safety, kilonewtons(support.least->force_kN), fixed(line.trend.deg(), 1),
+      fixed(line.plunge.deg(), 1), line.plunge.deg() < 0.0 ? ", upward" : "",
+      directions_text(support.target));
+}
+
+std::string support_text(const WedgeSupport& support) {
+  std::string text = '\n' + paragraph(least_bolt_text(support));
+  if (!support.target.direction) return text;
+  const Line& line = *support.target.direction;
+  const std::string way =
+      fmt::format("{}/{}", shortest(line.trend.deg()), shortest(line.plunge.deg()));
+  text += support.along_direction_kN
+              ? paragraph(fmt::format("Towards {}: {} kN.", way,
+                                      kilonewtons(*support.along_direction_kN)))
+              : paragraph(fmt::format("Towards {}: no force reaches it.", way));
+  return text;
+}
+
 std::string closing(const WedgeResult& r) {
   std::string text;
   for (const std::string& assumption : r.assumptions) {
@@ -113,12 +157,13 @@ std::string closing(const WedgeResult& r) {
 
 }  // namespace
 
-std::string wedge_text(const WedgeCase& wedge, const WedgeResult& result) {
+std::string wedge_text(const WedgeCase& wedge, const WedgeResult& result,
+                       const std::optional<WedgeSupport>& support) {
   if (!result.forms) {
     return heading(wedge) + paragraph("No wedge forms: " + result.reason + ".");
   }
   return heading(wedge) + size_text(result) + '\n' + planes_table(result) + '\n' +
-         balance_text(result) + closing(result);
+         balance_text(result) + (support ? support_text(*support) : "") + closing(result);
 }
 
 }  // namespace brink::cli

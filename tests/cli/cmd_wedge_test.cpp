@@ -91,6 +91,35 @@ TEST(CmdWedge, NothingDrivesIsInfinite) {
   EXPECT_EQ(doc["result"]["factor_of_safety"], "infinite");
 }
 
+TEST(CmdWedge, TargetGivesForceAndDirection) {
+  const auto doc = document({"--friction", "25", "--target", "1.5", "--bolt-plunge", "-5..20",
+                             "--bolt-direction", "000/10"});
+  const auto& r = doc["result"];
+  EXPECT_GT(r["bolt_for_target_kN"].get<double>(), 0.0);
+  EXPECT_EQ(r["bolt_for_target"]["action"], "active");
+  EXPECT_GE(r["bolt_for_target"]["plunge_deg"].get<double>(), -5.0 - 1e-9);
+  EXPECT_LE(r["bolt_for_target"]["plunge_deg"].get<double>(), 20.0 + 1e-9);
+  EXPECT_GE(r["bolt_in_direction_kN"].get<double>(), r["bolt_for_target_kN"].get<double>());
+  EXPECT_EQ(doc["inputs"]["target"]["least_plunge_deg"], -5.0);
+  const Outcome text = wedge({"--friction", "25", "--target", "1.5"});
+  EXPECT_TRUE(has(text.out, "Least active bolt force for a factor of safety of 1.5: "));
+  EXPECT_TRUE(document({"--friction", "25"})["result"]["bolt_for_target_kN"].is_null());
+}
+
+TEST(CmdWedge, EverySize) {
+  for (const Words& size : std::vector<Words>{{"--height-on-plane1", "9"},
+                                              {"--volume", "80"},
+                                              {"--trace-length1", "8"},
+                                              {"--trace-length2", "8"},
+                                              {"--persistence1", "12"},
+                                              {"--persistence2", "12"},
+                                              {"--height", "20", "--persistence2", "5"}}) {
+    const Outcome outcome = wedge({"--friction", "30", "--surcharge", "10"}, size);
+    EXPECT_EQ(outcome.status, 0) << outcome.err;
+  }
+  EXPECT_EQ(wedge({"--friction", "30", "--volume", "5"}).status, 2);
+}
+
 struct BadLine {
   Words more;
   std::string names;
@@ -111,6 +140,9 @@ TEST(CmdWedge, RefusesContradictionsAndGaps) {
       {{"--friction", "30", "--water-fill", "1", "--water-pressure1", "9"}, "--water-fill"},
       {{"--friction", "30", "--seismic-trend", "10"}, "--seismic-trend"},
       {{"--friction", "30", "--bolt", "10@20"}, "--bolt"},
+      {{"--friction", "30", "--bolt-plunge", "0..10"}, "--bolt-plunge"},
+      {{"--friction", "30", "--target", "1.5", "--bolt-plunge", "20..10"}, "--bolt-plunge"},
+      {{"--friction", "30", "--target", "0"}, "--target"},
       {{"--friction", "30", "--load", "-10@20/30"}, "--load"},
       {{"--friction", "30", "--bolt-action", "fixed"}, "--bolt-action"},
   };

@@ -68,7 +68,7 @@ TEST(WedgeProperty, SizeDoesNotMatterWithoutCohesionAndOutsideForces) {
     w.bolts.clear();
     w.water = WaterFill{0.4};
     const WedgeResult small = analyse_wedge(w);
-    w.geometry.size.value_m *= 7;
+    w.geometry.size.value *= 7;
     if (w.geometry.crack) w.geometry.crack->distance_m *= 7;
     const WedgeResult large = analyse_wedge(w);
     EXPECT_NEAR(large.factor_of_safety, small.factor_of_safety,

@@ -5,7 +5,7 @@
 #include <cmath>
 
 #include "brink/mechanics/dry_wedge.hpp"
-#include "brink/mechanics/wedge_equilibrium.hpp"
+#include "brink/mechanics/wedge_support.hpp"
 #include "brink/orientation/intersection.hpp"
 
 namespace brink {
@@ -47,6 +47,17 @@ TEST(PublishedWedge, HoekBrayComprehensiveSolution) {
   EXPECT_TRUE(r.warnings.empty());
 }
 
+// The same source (from memory): the least cable force that brings the factor of safety to 1.5 is
+// 3.4307e6 lb, plunging -6.98 (7 degrees upward) towards 349.
+TEST(PublishedWedge, HoekBrayLeastCable) {
+  const WedgeCase w = comprehensive_example();
+  const WedgeSupport support = support_wedge(w, analyse_wedge(w), {1.5});
+  ASSERT_TRUE(support.least && support.least->direction);
+  EXPECT_NEAR(support.least->force_kN, 3.4307e6, 0.0005e6);
+  EXPECT_NEAR(support.least->direction->plunge.deg(), -6.98, 0.02);
+  EXPECT_NEAR(support.least->direction->trend.deg(), 349.0, 0.5);
+}
+
 // Hoek & Bray 1981, ch. 8, angle-factor method (from memory): same planes without crack, total
 // height 130 ft, phi1 30, phi2 20, average pressure gw H/6. The book reads X 3.336, Y 3.429 and A
 // 1.5475 off a net and gives FS 1.3562; exact angles give 1.346 by the same formula.
@@ -82,7 +93,7 @@ TEST(PublishedWedge, HoekBrayAngleFactors) {
   w.geometry.size = {WedgeMeasure::height, 1.0};
   w.strength1 = MohrCoulomb{500.0, 30_deg};
   w.strength2 = MohrCoulomb{1000.0, 20_deg};
-  w.geometry.size.value_m = 130.0 / wedge_block(w.geometry).total_height_m;
+  w.geometry.size.value = 130.0 / wedge_block(w.geometry).total_height_m;
   const WedgeResult r = analyse_wedge(w);
   ASSERT_TRUE(r.forms);
   EXPECT_NEAR(r.block.total_height_m, 130.0, 1e-9);
@@ -106,7 +117,7 @@ TEST(PublishedWedge, HoekBrayFrictionOnly) {
   w.geometry.plane1 = {40_deg, 165_deg};
   w.geometry.plane2 = {70_deg, 285_deg};
   w.geometry.face = {65_deg, 200_deg};
-  w.geometry.size.value_m = 20.0;
+  w.geometry.size.value = 20.0;
   w.unit_weight_kN_m3 = 26.0;
   w.strength1 = MohrCoulomb{0.0, 35_deg};
   w.strength2 = MohrCoulomb{0.0, 20_deg};
@@ -116,7 +127,7 @@ TEST(PublishedWedge, HoekBrayFrictionOnly) {
   EXPECT_NEAR(k.a, 1.5, 0.05);
   EXPECT_NEAR(k.b, 0.7, 0.05);
   w.geometry.face = {80_deg, 235_deg};
-  w.geometry.size.value_m = 3.0;
+  w.geometry.size.value = 3.0;
   w.unit_weight_kN_m3 = 20.0;
   EXPECT_NEAR(analyse_wedge(w).factor_of_safety, safety, 1e-12);
 }
@@ -132,7 +143,7 @@ TEST(PublishedWedge, KovariFritzWedgeFactor) {
       w.geometry.plane1 = {50_deg, Angle::degrees(180 - turn)};
       w.geometry.plane2 = {Angle::degrees(dip), Angle::degrees(180 + turn)};
       w.geometry.face = {75_deg, 180_deg};
-      w.geometry.size.value_m = 10.0;
+      w.geometry.size.value = 10.0;
       w.unit_weight_kN_m3 = 26.0;
       w.strength1 = w.strength2 = MohrCoulomb{0.0, 33_deg};
       const WedgeResult r = analyse_wedge(w);

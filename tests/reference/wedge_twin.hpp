@@ -59,11 +59,11 @@ inline TwinResult twin(const WedgeCase& w) {
   const Vector3 n1 = upward_normal(g.plane1), n2 = upward_normal(g.plane2);
   const Vector3 f = outward_normal(g.face), u = upward_normal(g.upper);
   const Vector3 up_dip = -dip_vector(g.face.dip, g.face.dip_direction);
-  double height = g.size.value_m;
+  double height = g.size.value;
   const auto ground = [&] { return u.dot(up_dip * (height / up_dip.z())); };
   if (g.size.measure == WedgeMeasure::height_on_plane1) {
     height = 1.0;
-    height = g.size.value_m / three_planes(n1, 0, f, 0, u, ground()).z();
+    height = g.size.value / three_planes(n1, 0, f, 0, u, ground()).z();
   }
   const double rise = ground();
   const Vector3 a = three_planes(n1, 0, f, 0, u, rise), b = three_planes(n2, 0, f, 0, u, rise);

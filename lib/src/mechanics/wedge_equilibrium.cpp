@@ -17,9 +17,6 @@ namespace brink {
 
 namespace {
 
-// A driving force below this part of the weight is rounding: nothing drives the block.
-constexpr double kNoDrive = 1e-12;
-
 void check(const WedgeWater& water) {
   if (const auto* fill = std::get_if<WaterFill>(&water)) {
     require_between("water fill", fill->fill, 0.0, 1.0);
@@ -38,6 +35,7 @@ void check(const WedgeCase& w) {
   check_strength(w.strength2);
   check(w.water);
   require_not_negative("horizontal seismic coefficient", w.seismic.horizontal);
+  require_not_negative("surcharge", w.surcharge_kPa);
   require_finite("vertical seismic coefficient", w.seismic.vertical);
   for (const DirectedForce& load : w.loads) require_not_negative("load", load.force_kN);
   for (const DirectedForce& bolt : w.bolts) require_not_negative("bolt force", bolt.force_kN);
@@ -136,7 +134,8 @@ Vector3 acting_forces(const WedgeCase& w, WedgeResult& result) {
         "no crack cuts the wedge: the water pressure in the crack acts on nothing");
   }
   result.seismic_trend = seismic_trend(w, block);
-  return Vector3(0.0, 0.0, -result.weight_kN) +
+  result.surcharge_kN = w.surcharge_kPa * block.areas.upper_m2 * cos(w.geometry.upper.dip);
+  return Vector3(0.0, 0.0, -result.weight_kN - result.surcharge_kN) +
          seismic_vector(w.seismic, result.seismic_trend.value_or(Angle{}), result.weight_kN) +
          result.water.plane1_kN * block.into1 + result.water.plane2_kN * block.into2 +
          result.water.crack_kN * block.into_from_crack + sum_of(w.loads);
@@ -248,12 +247,12 @@ WedgeResult analyse_wedge(const WedgeCase& w) {
   result.reason = block.reason;
   if (!block.forms) return result;
 
-  Vector3 resultant = acting_forces(w, result);
+  result.resultant_kN = acting_forces(w, result);
   const Vector3 bolts = sum_of(w.bolts);
   const bool active = w.bolt_action == BoltAction::active;
-  if (active) resultant += bolts;
+  if (active) result.resultant_kN += bolts;
   result.contact =
-      wedge_contact(resultant, block.into1, block.into2, *block.line, result.weight_kN);
+      wedge_contact(result.resultant_kN, block.into1, block.into2, *block.line, result.weight_kN);
   take_strength(w, result);
   result.resisting_kN = shear_strength_kN(result);
   if (!active) add_passive_bolts(bolts, result);

@@ -5,6 +5,7 @@
 #include <Eigen/Geometry>
 #include <algorithm>
 #include <cmath>
+#include <limits>
 #include <utility>
 
 #include "brink/base/error.hpp"
@@ -40,7 +41,15 @@ void check(const WedgeGeometry& g) {
   require_below("dip of the upper ground", g.upper.dip.deg(), 0.0, 90.0);
   require_positive("dip of the face", g.face.dip.deg());
   require_below("dip of the face", g.face.dip.deg(), 0.0, 180.0);
-  require_positive("size of the wedge", g.size.value_m);
+  if (g.size.measure != WedgeMeasure::persistence) {
+    require_positive("size of the wedge", g.size.value);
+  } else if (!g.persistence1_m && !g.persistence2_m) {
+    throw Error(ErrorKind::argument, Place{.key = "size of the wedge"},
+                "is left to the planes' persistence, which is not given", {},
+                "the persistence of plane 1 or 2");
+  }
+  if (g.persistence1_m) require_positive("persistence of plane 1", *g.persistence1_m);
+  if (g.persistence2_m) require_positive("persistence of plane 2", *g.persistence2_m);
   if (!g.crack) return;
   require_between("dip of the tension crack", g.crack->plane.dip.deg(), 0.0, 90.0);
   require_not_negative("crack distance", g.crack->distance_m);
@@ -88,15 +97,52 @@ Corners corners_at_unit_height(const Bounds& n, const Vector3& v) {
 double height_of(const WedgeSize& size, const Corners& unit) {
   switch (size.measure) {
     case WedgeMeasure::height:
-      return size.value_m;
+      break;
     case WedgeMeasure::height_on_plane1:
-      if (strictly_above(unit.on_crest1.z(), 0.0)) return size.value_m / unit.on_crest1.z();
-      throw Error(ErrorKind::argument, {},
-                  "the height on plane 1 cannot size this wedge: plane 1's trace on the face does "
-                  "not rise to the crest",
-                  shortest(size.value_m), "the height up the face's dip line");
+      if (strictly_above(unit.on_crest1.z(), 0.0)) return size.value / unit.on_crest1.z();
+      throw Error(ErrorKind::argument, Place{.key = "height on plane 1"},
+                  "cannot size this wedge: plane 1's trace on the face does not rise to the crest",
+                  shortest(size.value), "the height up the face's dip line");
+    case WedgeMeasure::volume: {
+      const double unit_m3 = std::abs(unit.back.dot(unit.on_crest1.cross(unit.on_crest2))) / 6.0;
+      return std::cbrt(size.value / unit_m3);
+    }
+    case WedgeMeasure::trace_length1:
+      return size.value / unit.on_crest1.norm();
+    case WedgeMeasure::trace_length2:
+      return size.value / unit.on_crest2.norm();
+    case WedgeMeasure::persistence:
+      return std::numeric_limits<double>::infinity();
   }
-  return size.value_m;
+  return size.value;
+}
+
+// Longest side of the triangle toe, corner on the crest, back.
+double longest_side(const Vector3& on_crest, const Vector3& back) {
+  return std::max({on_crest.norm(), back.norm(), (back - on_crest).norm()});
+}
+
+// The height, scaled down where a plane does not reach that far.
+double limited_height(WedgeBlock& block, const WedgeGeometry& g, const Corners& unit) {
+  const double wanted = height_of(g.size, unit);
+  double height = wanted;
+  int limit = 0;
+  const auto cap = [&](int plane, const std::optional<double>& persistence, const Vector3& corner) {
+    if (!persistence) return;
+    const double reach = *persistence / longest_side(corner, unit.back);
+    if (reach < height) {
+      height = reach;
+      limit = plane;
+    }
+  };
+  cap(1, g.persistence1_m, unit.on_crest1);
+  cap(2, g.persistence2_m, unit.on_crest2);
+  if (limit != 0 && std::isfinite(wanted)) {
+    block.warnings.push_back(
+        fmt::format("plane {} reaches only {} m: the wedge is {:.4g} m high, not {:.4g} m", limit,
+                    shortest(limit == 1 ? *g.persistence1_m : *g.persistence2_m), height, wanted));
+  }
+  return height;
 }
 
 enum class CrackVerdict { misses, cuts, hides_toe };
@@ -222,7 +268,7 @@ WedgeBlock wedge_block(const WedgeGeometry& g) {
                  upward_normal(g.upper)};
   if (!place_block(block, n)) return block;
   const Corners unit = corners_at_unit_height(n, *block.line);
-  block.height_m = height_of(g.size, unit);
+  block.height_m = limited_height(block, g, unit);
   const Corners c = scaled(unit, block.height_m);
   block.total_height_m = c.back.z();
   std::vector<HalfSpace> spaces{

@@ -8,12 +8,39 @@ namespace {
 
 const char* size_key(WedgeMeasure measure) {
   switch (measure) {
-    case WedgeMeasure::height:
-      return "height_m";
     case WedgeMeasure::height_on_plane1:
+      return "height_on_plane1_m";
+    case WedgeMeasure::volume:
+      return "volume_m3";
+    case WedgeMeasure::trace_length1:
+      return "trace_length1_m";
+    case WedgeMeasure::trace_length2:
+      return "trace_length2_m";
+    case WedgeMeasure::height:
+    case WedgeMeasure::persistence:
       break;
   }
-  return "height_on_plane1_m";
+  return "height_m";
+}
+
+Value size_value(const WedgeSize& size) {
+  return size.measure == WedgeMeasure::persistence ? Value() : Value(size.value);
+}
+
+Value target_value(const std::optional<WedgeTarget>& target) {
+  if (!target) return nullptr;
+  return Object{{"factor_of_safety", target->factor_of_safety},
+                {"least_plunge_deg", target->least_plunge.deg()},
+                {"greatest_plunge_deg", target->greatest_plunge.deg()},
+                {"direction", target->direction ? line_value(*target->direction) : Value()}};
+}
+
+Value bolt_value(const std::optional<WedgeSupport>& support) {
+  if (!support || !support->least) return nullptr;
+  const std::optional<Line>& direction = support->least->direction;
+  return Object{{"action", to_string(support->action)},
+                {"trend_deg", direction ? Value(direction->trend.deg()) : Value()},
+                {"plunge_deg", direction ? Value(direction->plunge.deg()) : Value()}};
 }
 
 Value crack_value(const std::optional<TensionCrack>& crack) {
@@ -65,6 +92,7 @@ Object block_object(const WedgeResult& r) {
   const WedgeContact& c = r.contact;
   return Object{{"volume_m3", r.block.volume_m3},
                 {"weight_kN", r.weight_kN},
+                {"surcharge_kN", r.surcharge_kN},
                 {"areas_m2", areas_value(r.block.areas)},
                 {"height_m", r.block.height_m},
                 {"total_height_m", r.block.total_height_m},
@@ -84,31 +112,40 @@ Object block_object(const WedgeResult& r) {
 
 }  // namespace
 
-Value wedge_inputs(const WedgeCase& w, const WedgeResult& result) {
+Value wedge_inputs(const WedgeCase& w, const WedgeResult& result,
+                   const std::optional<WedgeTarget>& target) {
   const WedgeGeometry& g = w.geometry;
   return Object{{"plane1", plane_value(g.plane1)},
                 {"plane2", plane_value(g.plane2)},
                 {"face", face_value(g.face)},
                 {"upper", plane_value(g.upper)},
-                {size_key(g.size.measure), g.size.value_m},
+                {size_key(g.size.measure), size_value(g.size)},
+                {"persistence1_m", g.persistence1_m},
+                {"persistence2_m", g.persistence2_m},
                 {"crack", crack_value(g.crack)},
                 {"unit_weight_kN_m3", w.unit_weight_kN_m3},
                 {"strength1", strength_value(w.strength1)},
                 {"strength2", strength_value(w.strength2)},
                 {"water", water_value(w.water)},
                 {"water_unit_weight_kN_m3", w.water_unit_weight_kN_m3},
+                {"surcharge_kPa", w.surcharge_kPa},
                 {"seismic", seismic_value(w.seismic, result.seismic_trend)},
                 {"loads", forces_value(w.loads)},
                 {"bolts", forces_value(w.bolts)},
-                {"bolt_action", to_string(w.bolt_action)}};
+                {"bolt_action", to_string(w.bolt_action)},
+                {"target", target_value(target)}};
 }
 
-Value wedge_value(const WedgeResult& r) {
+Value wedge_value(const WedgeResult& r, const std::optional<WedgeSupport>& support) {
   Object object{{"forms", r.forms},
                 {"reason", r.forms ? Value() : Value(r.reason)},
                 {"line", r.line ? line_value(*r.line) : Value()}};
   const Object block = block_object(r);
   for (const auto& [key, value] : block.members()) object.add(key, r.forms ? value : Value());
+  const bool sized = support && support->least;
+  object.add("bolt_for_target_kN", sized ? Value(support->least->force_kN) : Value());
+  object.add("bolt_for_target", bolt_value(support));
+  object.add("bolt_in_direction_kN", support ? Value(support->along_direction_kN) : Value());
   object.add("assumptions", Array(r.assumptions.begin(), r.assumptions.end()));
   return object;
 }

@@ -15,7 +15,7 @@ WedgeGeometry plain() {
   g.plane1 = {45_deg, 135_deg};
   g.plane2 = {45_deg, 225_deg};
   g.face = {90_deg, 180_deg};
-  g.size.value_m = 10;
+  g.size.value = 10;
   return g;
 }
 
@@ -127,9 +127,51 @@ TEST(WedgeGeometry, HeightOnPlane1) {
   EXPECT_NEAR(top, 30, 1e-9);
 }
 
+// Every measure of one wedge gives that wedge.
+TEST(WedgeGeometry, SizesAgree) {
+  WedgeGeometry g = plain();
+  g.face = {65_deg, 185_deg};
+  g.upper = {12_deg, 195_deg};
+  const WedgeBlock block = wedge_block(g);
+  const auto far_corner = [&](WedgeSurface plane) {
+    double length = 0;
+    for (const Vector3& x : block.surfaces[static_cast<std::size_t>(plane)].corners) {
+      if (std::abs(x.dot(outward_normal(g.face))) < 1e-9) length = std::max(length, x.norm());
+    }
+    return length;
+  };
+  const std::vector<WedgeSize> sizes{
+      {WedgeMeasure::volume, block.volume_m3},
+      {WedgeMeasure::trace_length1, far_corner(WedgeSurface::plane1)},
+      {WedgeMeasure::trace_length2, far_corner(WedgeSurface::plane2)}};
+  for (const WedgeSize& size : sizes) {
+    g.size = size;
+    EXPECT_NEAR(wedge_block(g).height_m, 10, 1e-9);
+  }
+}
+
+TEST(WedgeGeometry, PersistenceLimitsTheWedge) {
+  WedgeGeometry g = plain();
+  g.size = {WedgeMeasure::persistence, 0};
+  EXPECT_THROW(wedge_block(g), Error);
+  // The longest side of plane 1's triangle is its trace on the upper ground, 20 m for a 10 m face.
+  g.persistence1_m = 10.0;
+  EXPECT_NEAR(wedge_block(g).height_m, 5, 1e-9);
+  g.persistence2_m = 4.0;
+  EXPECT_NEAR(wedge_block(g).height_m, 2, 1e-9);
+  EXPECT_TRUE(wedge_block(g).warnings.empty());
+  g.size = {WedgeMeasure::height, 10};
+  const WedgeBlock limited = wedge_block(g);
+  EXPECT_NEAR(limited.height_m, 2, 1e-9);
+  ASSERT_EQ(limited.warnings.size(), 1U);
+  EXPECT_TRUE(has(limited.warnings[0], "plane 2 reaches only 4 m"));
+  g.size = {WedgeMeasure::height, 1.5};
+  EXPECT_NEAR(wedge_block(g).height_m, 1.5, 1e-12);
+}
+
 TEST(WedgeGeometry, RefusesValuesOutOfRange) {
   WedgeGeometry g = plain();
-  g.size.value_m = 0;
+  g.size.value = 0;
   EXPECT_THROW(wedge_block(g), Error);
   g = plain();
   g.face.dip = 180_deg;

@@ -26,6 +26,9 @@ enum class WedgeMode {
 
 std::string_view to_string(WedgeMode mode);  // "both", "plane1", "plane2", "lifts"
 
+// A driving force of at most this part of the weight is rounding: nothing drives the block.
+inline constexpr double kNoDrive = 1e-12;
+
 // Normal forces N1, N2 (either sign) with force + N1 into1 + N2 into2 along the planes' line.
 std::pair<double, double> normals_on_both(const Vector3& force, const Vector3& into1,
                                           const Vector3& into2);
@@ -55,7 +58,9 @@ struct WedgeCase {
   Strength strength2 = MohrCoulomb{};
   WedgeWater water = WaterFill{};
   double water_unit_weight_kN_m3 = 9.81;
-  Seismic seismic;  // trend: of the line of intersection where it is not given
+  double surcharge_kPa = 0.0;  // on the upper ground, vertical, per horizontal area; >= 0
+  Seismic seismic;  // shares of the block's weight; trend: of the line of intersection where it is
+                    // not given
   std::vector<DirectedForce> loads;
   std::vector<DirectedForce> bolts;  // the direction in which each pulls the block
   BoltAction bolt_action = BoltAction::active;
@@ -74,7 +79,9 @@ struct WedgeResult {
   std::optional<Line> line;
   WedgeBlock block;
   double weight_kN = 0.0;
-  WedgeContact contact;  // with active bolts
+  double surcharge_kN = 0.0;
+  Vector3 resultant_kN = Vector3::Zero();  // of all but reactions and passive bolts
+  WedgeContact contact;                    // under the resultant
   WedgeWaterForces water;
   std::optional<Angle> seismic_trend;  // used; absent without a horizontal seismic load
   // The straight lines used for the planes in contact, at the stress that each bears.
@@ -91,12 +98,11 @@ struct WedgeResult {
 // the depth of the crack's lowest corner (Hoek & Bray, appendix). It pushes along the planes'
 // inward normals, also on a plane that opens, and from the crack towards the face.
 // Factor of safety = resisting / driving. Pushed up the line, it is taken against that movement,
-// with a warning; a driving force of at most 1e-12 of the weight is none. Passive bolts add their
-// part against the movement, and tan(friction) times the normals they raise. Properties: unchanged
-// by turning everything about the vertical, by swapping the planes and, without cohesion and
-// outside forces, by scaling.
-// Throws ErrorKind::argument for a value out of its range, and for a horizontal seismic load
-// without a trend where the line of intersection is vertical.
+// with a warning; a driving force of at most kNoDrive of the weight is none. Passive bolts add
+// their part against the movement, and tan(friction) times the normals they raise. Properties:
+// unchanged by turning everything about the vertical, by swapping the planes and, without cohesion
+// and outside forces, by scaling. Throws ErrorKind::argument for a value out of its range, and for
+// a horizontal seismic load without a trend where the line of intersection is vertical.
 WedgeResult analyse_wedge(const WedgeCase& wedge);
 
 }  // namespace brink

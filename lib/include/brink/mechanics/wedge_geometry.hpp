@@ -18,12 +18,16 @@ namespace brink {
 enum class WedgeMeasure {
   height,            // of the crest above the toe, up the face's dip line
   height_on_plane1,  // of the crest above the toe along plane 1's trace on the face
+  volume,            // of the whole wedge, before a crack cuts it
+  trace_length1,     // of plane 1's trace on the face, from the toe to the crest
+  trace_length2,
+  persistence,  // as large as the planes' persistence allows; no value
 };
 
-// What fixes the size of the wedge; value_m > 0.
+// What fixes the size of the wedge; value > 0, in m (m3 for a volume).
 struct WedgeSize {
   WedgeMeasure measure = WedgeMeasure::height;
-  double value_m = 0.0;
+  double value = 0.0;
   bool operator==(const WedgeSize&) const = default;
 };
 
@@ -40,6 +44,10 @@ struct WedgeGeometry {
   Plane upper = kLevelGround;  // dip below 90
   WedgeSize size;
   std::optional<TensionCrack> crack;
+  // The joints' greatest length, > 0: no side of the wedge's triangle on that plane is longer (the
+  // whole wedge, before a crack cuts it). A wedge that its size would make larger is scaled down.
+  std::optional<double> persistence1_m;
+  std::optional<double> persistence2_m;
 };
 
 struct WedgeAreas {
@@ -57,7 +65,7 @@ enum class WedgeSurface : std::size_t { plane1, plane2, face, upper, crack };
 struct WedgeBlock {
   bool forms = false;
   std::string reason;                 // in words, empty where it forms
-  std::vector<std::string> warnings;  // a crack that does not reach the wedge
+  std::vector<std::string> warnings;  // crack that misses, size that persistence limits
   std::optional<Vector3> line;        // unit vector down the line of intersection; absent: parallel
   Vector3 into1 = Vector3::Zero();    // unit normals of the planes, into the block
   Vector3 into2 = Vector3::Zero();
