@@ -69,6 +69,21 @@ int run_kinematics(const std::vector<std::string>& files, const KinematicsRun& r
   return kDone;
 }
 
+Option pairs_option(std::uint64_t& target) {
+  Option option;
+  option.name = "--pairs";
+  option.value = "N";
+  option.help =
+      "Pairs sampled for the number that are unstable dry, where more than 20,000 different "
+      "readings "
+      "leave too many to look at each: 1000 to 10^10. All other counts are exact at any size.";
+  option.take = [&target](std::string_view text) {
+    target = parse_whole("--pairs", text, 1000, 10'000'000'000U);
+  };
+  option.default_text = "4000000";
+  return option;
+}
+
 }  // namespace
 
 Command kinematics_command() {
@@ -88,6 +103,7 @@ Command kinematics_command() {
   command.options.push_back(set_column_option(run->input));
   command.options.push_back(flag_option(
       "--no-sets", "Looks for no sets: counts for all readings together.", run->no_sets));
+  command.options.push_back(pairs_option(run->tests.pairs));
   command.options.push_back(seed_option(run->tests.seed));
   command.options.push_back(threads_option(run->tests.threads));
   add_output_options(command.options, run->output);

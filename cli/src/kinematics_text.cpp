@@ -92,6 +92,12 @@ std::string notes(const FaceKinematics& face) {
       "planes' wedging counted. {} for blocks to topple on, {} of which {} steep enough to slide.",
       counted(face.unstable_dry, "has", "have"), counted(face.bases, "base", "bases"),
       grouped(face.sliding_bases), face.sliding_bases == 1 ? "is" : "are");
+  if (face.unstable_dry_standard_error) {
+    text += fmt::format(
+        " The first number is estimated from a sample of {}, with a standard error of {}.",
+        counted(face.unstable_dry_sampled, "pair", "pairs"),
+        grouped(static_cast<std::uint64_t>(*face.unstable_dry_standard_error + 0.5)));
+  }
   if (face.parallel_pairs > 0) {
     text += fmt::format(" Left out: {}.", counted(face.parallel_pairs, "pair of parallel readings",
                                                   "pairs of parallel readings"));

@@ -146,6 +146,19 @@ void ChordCounter::find_parallel() {
   parallel_.erase(repeated.begin(), repeated.end());
 }
 
+DistinctPlanes ChordCounter::distinct_planes() const {
+  DistinctPlanes out;
+  for (const Merged& plane : planes_) {
+    out.planes.x.push_back(plane.normal.x());
+    out.planes.y.push_back(plane.normal.y());
+    out.planes.z.push_back(plane.normal.z());
+    out.planes.weight.push_back(plane.weight);
+    out.copies.push_back(static_cast<std::int64_t>(plane.count));
+  }
+  out.planes.group_begin = {0, planes_.size()};
+  return out;
+}
+
 PairTally ChordCounter::empty_tally() const {
   PairTally tally;
   tally.by_groups.resize(groups_ * (groups_ + 1) / 2);

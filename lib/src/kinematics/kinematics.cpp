@@ -7,8 +7,10 @@
 
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
+#include "brink/kinematics/chords.hpp"
 #include "brink/kinematics/modes.hpp"
 #include "brink/kinematics/pairs.hpp"
+#include "brink/kinematics/unstable.hpp"
 #include "brink/mechanics/dry_wedge.hpp"
 #include "intervals.hpp"
 
@@ -129,20 +131,41 @@ void fill_interval(ModeCount& mode, const std::optional<ShareInterval>& interval
   mode.share_high = interval->high;
 }
 
-FaceKinematics test_face(const PairReadings& readings, const PairTally& lines, const Face& face,
+// Up to here every pair is looked at for its factor of safety; beyond, a sample.
+constexpr std::size_t kMostDistinct = 20'000;
+
+UnstableDry test_dry(const PairReadings& readings, const ChordCounter& pairs,
+                     const FaceLimits& limits, const KinematicsOptions& options) {
+  const std::uint64_t n = readings.size();
+  if (pairs.distinct() > kMostDistinct && n * (n - 1) / 2 > options.pairs) {
+    return sample_unstable_dry(readings, limits, options.friction, options.pairs, options.seed,
+                               options.threads);
+  }
+  const DistinctPlanes distinct = pairs.distinct_planes();
+  return {count_unstable_dry(distinct.planes, distinct.copies, limits, options.friction,
+                             options.threads),
+          std::nullopt, 0};
+}
+
+FaceKinematics test_face(const PairReadings& readings, const ChordCounter& pairs,
+                         const PairTally& lines, const Face& face,
                          const KinematicsOptions& options) {
   const FaceLimits limits = prepare_limits(
       face,
       {options.upper, options.friction, options.strike_tolerance, options.toppling_tolerance});
   const PlaneFlags planes = test_planes(readings, limits);
-  const PairCounts pairs = count_pairs(readings, limits, options.friction, options.threads);
+  const PairTally wedge = pairs.wedge_sliding(limits, options.threads);
+  const PairTally block = pairs.block_toppling(limits, options.threads);
   FaceKinematics result;
   result.face = face;
   result.planar_sliding = plane_mode(readings, planes.sliding);
   result.flexural_toppling = plane_mode(readings, planes.flexural);
-  result.wedge_sliding = pair_mode(readings, lines, pairs.wedge_sliding);
-  result.block_toppling = pair_mode(readings, lines, pairs.block_toppling);
-  result.unstable_dry = pairs.unstable_dry;
+  result.wedge_sliding = pair_mode(readings, lines, wedge);
+  result.block_toppling = pair_mode(readings, lines, block);
+  const UnstableDry dry = test_dry(readings, pairs, limits, options);
+  result.unstable_dry = dry.count;
+  result.unstable_dry_standard_error = dry.standard_error;
+  result.unstable_dry_sampled = dry.sampled;
   result.bases = planes.bases;
   result.sliding_bases = result.planar_sliding.admissible;
   const std::uint64_t n = readings.size();
@@ -151,8 +174,8 @@ FaceKinematics test_face(const PairReadings& readings, const PairTally& lines, c
   const Counts each(readings.size(), 1);
   const auto intervals = share_intervals({{planes.sliding, each, 1},
                                           {planes.flexural, each, 1},
-                                          {pairs.wedge_sliding.of_reading, lines.of_reading, 2},
-                                          {pairs.block_toppling.of_reading, lines.of_reading, 2}},
+                                          {wedge.of_reading, lines.of_reading, 2},
+                                          {block.of_reading, lines.of_reading, 2}},
                                          options.seed, options.threads);
   fill_interval(result.planar_sliding, intervals[0]);
   fill_interval(result.flexural_toppling, intervals[1]);
@@ -179,11 +202,12 @@ KinematicsResult test_kinematics(const Readings& readings, const std::vector<int
                                  std::size_t set_count, const KinematicsOptions& options) {
   check(options);
   const PairReadings arranged = arrange_by_set(readings, assignment, set_count);
-  const PairTally lines = count_lines(arranged, options.threads);
+  const ChordCounter pairs(arranged);
+  const PairTally lines = pairs.lines();
   KinematicsResult result;
   result.options = options;
   for (const Face& face : options.faces) {
-    result.faces.push_back(test_face(arranged, lines, face, options));
+    result.faces.push_back(test_face(arranged, pairs, lines, face, options));
     warn_without_crest(face, options.upper, result.warnings);
   }
   return result;

@@ -28,6 +28,21 @@ BRINK_ALWAYS_INLINE Trial make_trial(double x, double y, double z) {
   return {x, y, z, across_squared, kTieSquared * (across_squared + z * z)};
 }
 
+// The line of two planes with unit normals, unless they are parallel.
+BRINK_ALWAYS_INLINE Trial line_of(const Vector3& n, double x, double y, double z) {
+  return make_trial(n.y() * z - n.z() * y, n.z() * x - n.x() * z, n.x() * y - n.y() * x);
+}
+
+BRINK_ALWAYS_INLINE double squared_length(const Trial& v) {
+  return v.across_squared + v.z * v.z;
+}
+
+// For unit normals the cross product's length is the sine of the angle between the axes, equal to
+// the angle when this small.
+BRINK_ALWAYS_INLINE bool is_line(const Trial& v) {
+  return squared_length(v) > kParallel * kParallel;
+}
+
 BRINK_ALWAYS_INLINE double dot(const Trial& v, const Vector3& n) {
   return v.x * n.x() + v.y * n.y() + v.z * n.z();
 }

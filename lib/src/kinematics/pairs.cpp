@@ -11,7 +11,7 @@
 #include "../base/clones.hpp"
 #include "brink/base/error.hpp"
 #include "brink/base/parallel.hpp"
-#include "brink/mechanics/dry_wedge.hpp"
+#include "brink/kinematics/unstable.hpp"
 #include "line_tests.hpp"
 
 namespace brink {
@@ -46,21 +46,6 @@ struct LineSums {
   RowCounts rows{};
 };
 
-BRINK_ALWAYS_INLINE line_tests::Trial line_of(const Vector3& n, double x, double y, double z) {
-  return line_tests::make_trial(n.y() * z - n.z() * y, n.z() * x - n.x() * z,
-                                n.x() * y - n.y() * x);
-}
-
-BRINK_ALWAYS_INLINE double squared_length(const line_tests::Trial& v) {
-  return v.across_squared + v.z * v.z;
-}
-
-// For unit normals the cross product's length is the sine of the angle between the axes, equal to
-// the angle when this small.
-BRINK_ALWAYS_INLINE bool is_line(const line_tests::Trial& v) {
-  return squared_length(v) > kParallel * kParallel;
-}
-
 // Adds the pairs of a block whose line passes `test`. One test a loop: the compiler vectorises
 // these, and gives up on a loop that holds two.
 template <typename Test>
@@ -76,8 +61,8 @@ BRINK_ALWAYS_INLINE void sum_where(const PairReadings& r, const Block& block, Li
     const double w = r.weight[i];
     std::int64_t in_row = 0;
     for (std::size_t k = block.first(i); k < block.columns(); ++k) {
-      const line_tests::Trial v = line_of(n, x[k], y[k], z[k]);
-      const bool yes = is_line(v) & test(v);
+      const line_tests::Trial v = line_tests::line_of(n, x[k], y[k], z[k]);
+      const bool yes = line_tests::is_line(v) & test(v);
       count[k] += yes ? 1.0 : 0.0;
       weight[k] += yes ? w : 0.0;
       in_row += yes ? 1 : 0;
@@ -102,77 +87,6 @@ BRINK_CLONES void sum_toppling(const PairReadings& r, const FaceLimits& limits, 
   const FaceLimits local = limits;
   sum_where(r, block, sums,
             [&local](const line_tests::Trial& v) { return line_tests::topples(local, v); });
-}
-
-struct DryWedges {
-  const FaceLimits& limits;
-  double tan_friction;
-};
-
-// What the factor of safety of a pair needs of each reading alone, for one face: see
-// mechanics/dry_wedge.hpp for the meaning.
-struct SafetyColumns {
-  std::vector<double> climb;  // sign of (normal x face) . upper; 0: bounds no block
-  std::vector<double> alone;  // 1 where a block sliding on this plane alone is unstable, else 0
-};
-
-SafetyColumns prepare_safety(const PairReadings& r, const DryWedges& dry) {
-  SafetyColumns out;
-  out.climb.reserve(r.size());
-  out.alone.reserve(r.size());
-  for (std::size_t i = 0; i < r.size(); ++i) {
-    const Vector3 n = {r.x[i], r.y[i], r.z[i]};
-    const double climb = n.cross(dry.limits.face_normal).dot(dry.limits.upper_normal);
-    out.climb.push_back(std::abs(climb) <= kTie ? 0.0 : std::copysign(1.0, climb));
-    const double drive = std::hypot(n.x(), n.y());
-    const bool slips =
-        drive > 1e-12 && strictly_below(std::abs(n.z()) * dry.tan_friction / drive, 1.0);
-    out.alone.push_back(slips ? 1.0 : 0.0);
-  }
-  return out;
-}
-
-// Pairs that daylight and whose dry_factor_of_safety() is strictly below 1, decided by the same
-// comparisons cleared of divisions; tests hold the two to each other.
-BRINK_CLONES std::int64_t count_unstable(const PairReadings& r, const SafetyColumns& safety,
-                                         const DryWedges& dry, const Block& block) {
-  const double* __restrict x = r.x.data() + block.column;
-  const double* __restrict y = r.y.data() + block.column;
-  const double* __restrict z = r.z.data() + block.column;
-  const double* __restrict climb = safety.climb.data() + block.column;
-  const double* __restrict alone = safety.alone.data() + block.column;
-  const FaceLimits local = dry.limits;
-  const double tan_friction = dry.tan_friction;
-  std::int64_t unstable = 0;
-  for (std::size_t i = block.row; i < block.row_end; ++i) {
-    const Vector3 n = {r.x[i], r.y[i], r.z[i]};
-    const double climb_i = safety.climb[i];
-    const double alone_i = safety.alone[i];
-    for (std::size_t k = block.first(i); k < block.columns(); ++k) {
-      const line_tests::Trial v = line_of(n, x[k], y[k], z[k]);
-      const double square = squared_length(v);
-      const double turn = line_tests::dot(v, local.face_normal) < 0.0 ? -1.0 : 1.0;
-      const double side_i = turn * climb[k];
-      const double side_j = -turn * climb_i;
-      const double press_i = side_i * (v.y * x[k] - v.x * y[k]);
-      const double press_j = side_j * (v.x * n.y() - v.y * n.x());
-      const double slack = -kTie * square;
-      const bool held_i = press_i >= slack;
-      const bool held_j = press_j >= slack;
-      const double drive = (v.z < 0.0 ? -v.z : v.z) * std::sqrt(square);
-      const double hold =
-          ((press_i > 0.0 ? press_i : 0.0) + (press_j > 0.0 ? press_j : 0.0)) * tan_friction;
-      const bool slips = (drive > 1e-12 * square) & (hold < (1.0 - kTie) * drive);
-      const bool on_i = !held_j & (side_i * n.z() > 0.0);
-      const bool on_j = !held_i & (side_j * z[k] > 0.0);
-      const bool one = (!on_i | (alone_i > 0.0)) & (on_i | !on_j | (alone[k] > 0.0));
-      const bool both = held_i & held_j;
-      const bool fails = (both & slips) | (!both & one);
-      const bool block_bounded = (climb_i * climb[k] != 0.0) & is_line(v);
-      unstable += (fails & block_bounded & line_tests::daylights(local, v)) ? 1 : 0;
-    }
-  }
-  return unstable;
 }
 
 // Rows of one group: the unit of work handed to a thread.
@@ -319,10 +233,6 @@ PairCounts count_pairs(const PairReadings& readings, const FaceLimits& limits, A
   const std::vector<RowBlock> rows = row_blocks(readings);
   TallyBuilder wedge(readings, rows);
   TallyBuilder topple(readings, rows);
-  std::vector<std::int64_t> unstable(rows.size());
-  const bool rises = rises_to_crest(limits.face_normal, limits.upper_normal);
-  const DryWedges dry{limits, tan(friction)};
-  const SafetyColumns safety = prepare_safety(readings, dry);
   for_each_chunk(rows.size(), 1, threads, [&](std::size_t index, std::size_t, std::size_t) {
     LineSums sliding;
     LineSums toppling;
@@ -333,14 +243,12 @@ PairCounts count_pairs(const PairReadings& readings, const FaceLimits& limits, A
       toppling.columns = {};
       sum_toppling(readings, limits, block, toppling);
       topple.add(index, block, toppling.columns);
-      if (rises) unstable[index] += count_unstable(readings, safety, dry, block);
     }
     wedge.add_rows(rows[index], sliding.rows);
     topple.add_rows(rows[index], toppling.rows);
   });
-  PairCounts counts{wedge.finish(), topple.finish(), 0};
-  for (const std::int64_t some : unstable) counts.unstable_dry += static_cast<std::uint64_t>(some);
-  return counts;
+  return {wedge.finish(), topple.finish(),
+          count_unstable_dry(readings, {}, limits, friction, threads)};
 }
 
 }  // namespace brink

@@ -38,6 +38,9 @@ Value face_kinematics_value(const FaceKinematics& face, Angle friction, const Se
   Object wedge = mode_object(face.wedge_sliding, true, sets);
   wedge.add("parallel_pairs", face.parallel_pairs);
   wedge.add("unstable_dry", face.unstable_dry);
+  wedge.add("unstable_dry_standard_error", face.unstable_dry_standard_error);
+  wedge.add("unstable_dry_sampled_pairs",
+            face.unstable_dry_sampled > 0 ? Value(face.unstable_dry_sampled) : Value());
   Object block = mode_object(face.block_toppling, true, sets);
   block.add("parallel_pairs", face.parallel_pairs);
   block.add("bases", face.bases);
@@ -65,6 +68,7 @@ Object kinematics_inputs(const KinematicsOptions& options) {
                 {"friction_deg", options.friction.deg()},
                 {"strike_tolerance_deg", options.strike_tolerance.deg()},
                 {"toppling_tolerance_deg", options.toppling_tolerance.deg()},
+                {"pairs", options.pairs},
                 {"seed", options.seed}};
 }
 

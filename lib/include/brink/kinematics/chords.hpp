@@ -25,6 +25,13 @@ namespace brink {
 
 struct LineZone;
 
+// The different planes of an arrangement, sets not told apart, and how many readings each stands
+// for.
+struct DistinctPlanes {
+  PairReadings planes;  // one group; sources empty
+  std::vector<std::int64_t> copies;
+};
+
 // Counts pairs of one arrangement of readings on any number of faces. Memory grows with the number
 // of readings (and with the near-parallel pairs of unequal readings, which are few unless the data
 // are copies with noise below 1e-6). Safe to share between threads.
@@ -34,6 +41,7 @@ class ChordCounter {
 
   // Different planes among the readings, sets apart.
   std::size_t distinct() const { return planes_.size(); }
+  DistinctPlanes distinct_planes() const;
 
   // What count_lines() gives: pairs that have a line.
   PairTally lines() const;

@@ -17,6 +17,7 @@ struct KinematicsOptions {
   Angle friction;                                 // 0 <= friction < 90
   Angle strike_tolerance = Angle::degrees(20.0);  // planar sliding, and the bases of block toppling
   Angle toppling_tolerance = Angle::degrees(30.0);
+  std::uint64_t pairs = 4'000'000;  // sampled for unstable_dry where not every pair is looked at
   std::uint64_t seed = 1;
   unsigned threads = 0;
 };
@@ -55,8 +56,11 @@ struct FaceKinematics {
   ModeCount flexural_toppling;
   ModeCount block_toppling;
   std::uint64_t parallel_pairs = 0;  // no line; in neither `tested` nor by_set
-  std::uint64_t unstable_dry =
-      0;                    // pairs that daylight with a dry, cohesionless factor of safety below 1
+  // Pairs that daylight with a dry, cohesionless factor of safety below 1. With more than 20,000
+  // different readings an estimate from `unstable_dry_sampled` pairs, with its standard error.
+  std::uint64_t unstable_dry = 0;
+  std::optional<double> unstable_dry_standard_error;
+  std::uint64_t unstable_dry_sampled = 0;
   std::uint64_t bases = 0;  // block toppling
   std::uint64_t sliding_bases = 0;
 };
@@ -70,7 +74,8 @@ struct KinematicsResult {
 // Tests every reading and every pair of readings on every face. `assignment` is one integer a
 // reading, 0 for no set (all zeros where sets are not wanted); `set_count` the number of sets.
 // Definitions: kinematics/modes.hpp; a dry wedge's factor of safety: mechanics/dry_wedge.hpp. Cost:
-// some nanoseconds a pair and face, N (N - 1) / 2 pairs; memory grows with N. Throws
+// pairs are counted by chords.hpp, below a microsecond a reading, face and pair of sets; for
+// unstable_dry some nanoseconds a pair up to 20,000 different readings. Memory grows with N. Throws
 // ErrorKind::argument for a face, friction or tolerance out of its range.
 KinematicsResult test_kinematics(const Readings& readings, const std::vector<int>& assignment,
                                  std::size_t set_count, const KinematicsOptions& options);
