@@ -1,5 +1,5 @@
-// Branch-free exp2 and log that a compiler can vectorise, and the macro that builds a hot function
-// once for each common instruction set. The standard functions are calls and stop vectorisation.
+// Branch-free exp2 and log that a compiler can vectorise; the standard functions are calls and stop
+// vectorisation. Functions that use them are marked for several instruction sets by clones.hpp.
 //
 // Results are the same bits on every instruction set, because contraction is off (CMakeLists.txt)
 // and every operation is a plain IEEE one.
@@ -8,15 +8,7 @@
 #include <bit>
 #include <cstdint>
 
-// Function multiversioning: the loader picks the clone that the machine supports. Sanitizers
-// instrument the resolver before they are set up, so they get one version.
-#if defined(__x86_64__) && defined(__GNUC__) && !defined(__clang__) && \
-    !defined(__SANITIZE_ADDRESS__) && !defined(__SANITIZE_THREAD__)
-#define BRINK_CLONES \
-  __attribute__((target_clones("default", "arch=x86-64-v3", "arch=x86-64-v4")))
-#else
-#define BRINK_CLONES
-#endif
+#include "clones.hpp"
 
 namespace brink {
 

@@ -8,7 +8,7 @@
 #include <string_view>
 #include <utility>
 
-#include "../base/clones.hpp"
+#include "base/clones.hpp"
 #include "brink/base/error.hpp"
 #include "brink/base/parallel.hpp"
 #include "brink/kinematics/unstable.hpp"
