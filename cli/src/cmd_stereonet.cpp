@@ -203,8 +203,8 @@ Value inputs_value(const Readings& readings, const StereonetRun& run) {
 }
 
 std::string drawn_text(const Shown& shown, const StereonetRun& run, std::size_t pages) {
-  std::string text = fmt::format("{} drawn to {}", usage_text(shown.readings), run.output.output);
-  if (pages > 1) text += fmt::format(", {} faces", pages);
+  std::string text = fmt::format("{}; drawn to {}", usage_text(shown.readings), run.output.output);
+  if (pages > 1) text += fmt::format(", a sheet for each of {} faces", pages);
   text += '\n';
   if (shown.density) {
     const Line& peak = shown.density->peak_line;

@@ -7,6 +7,7 @@
 
 #include "brink/base/random.hpp"
 #include "brink/orientation/intersection.hpp"
+#include "brink/plot/cairo_painter.hpp"
 #include "brink/plot/hatch.hpp"
 #include "brink/plot/stereonet.hpp"
 #include "brink/plot/style.hpp"
@@ -85,9 +86,8 @@ std::string note_of(const ModeNetContent& content) {
   if (content.mode != Mode::block_toppling) return {};
   const FaceKinematics& face = content.face;
   if (face.bases == 0) return "no reading makes a base to topple on";
-  return fmt::format("{} {} bases; {} slide too", grouped(face.bases),
-                     face.bases == 1 ? "reading makes" : "readings make",
-                     grouped(face.sliding_bases));
+  return fmt::format("bases: {} {}, {} of them sliding too", grouped(face.bases),
+                     face.bases == 1 ? "reading" : "readings", grouped(face.sliding_bases));
 }
 
 void add_caption(Group& group, const NetFrame& frame, const CountInWords& words,
@@ -104,11 +104,12 @@ void add_caption(Group& group, const NetFrame& frame, const CountInWords& words,
                   1});
   y += 4.2;
   const TextStyle small = style::text(style::kNote_mm, style::kMuted);
-  if (!words.leading.empty()) {
-    add(group, Text{{left, y}, words.leading, small, Anchor::start, width, 1});
-    y += 3.7;
+  for (const std::string& sentence : {words.leading, note}) {
+    if (sentence.empty()) continue;
+    const Text text{{left, y}, sentence, small, Anchor::start, width, 2};
+    add(group, text);
+    y += 3.6 * measure(text).lines;
   }
-  if (!note.empty()) add(group, Text{{left, y}, note, small, Anchor::start, width, 1});
 }
 
 // The pair with this number, counting (1,0), (2,0), (2,1), (3,0) ...

@@ -36,6 +36,7 @@ std::string source_name(const SetsResult& sets, const SetCount& count, bool pair
 }
 
 std::string leading_sets(const ModeCount& counts, const SetsResult& sets, bool pairs) {
+  if (sets.sets.empty()) return {};
   std::vector<SetCount> by_set;
   for (const SetCount& c : counts.by_set) {
     if (c.admissible > 0) by_set.push_back(c);
