@@ -5,6 +5,7 @@
 #include <string>
 
 #include "brink/base/error.hpp"
+#include "brink/risk/wedge_variation.hpp"
 
 namespace brink::cli {
 
@@ -295,6 +296,14 @@ std::optional<TensionCrack> crack_of(const WedgeOptions& o) {
   return TensionCrack{*o.crack, *o.crack_distance};
 }
 
+std::string variable_names() {
+  std::string names;
+  for (const WedgeVariable& variable : wedge_variables()) {
+    names += (names.empty() ? "" : ", ") + variable.name;
+  }
+  return names;
+}
+
 }  // namespace
 
 void add_wedge_options(std::vector<Option>& options, WedgeOptions& target) {
@@ -304,6 +313,7 @@ void add_wedge_options(std::vector<Option>& options, WedgeOptions& target) {
   add_water_options(options, target);
   add_load_options(options, target);
   add_target_options(options, target);
+  add_sensitivity_options(options, target.sensitivity, variable_names());
 }
 
 WedgeCase wedge_case(const WedgeOptions& o) {

@@ -7,6 +7,7 @@
 
 #include "brink/mechanics/wedge_support.hpp"
 #include "options.hpp"
+#include "sensitivity_options.hpp"
 
 namespace brink::cli {
 
@@ -23,6 +24,7 @@ struct WedgeOptions {
   std::optional<double> crack_distance;
   std::optional<double> seismic_horizontal;
   std::optional<double> water_fill, water_pressure1, water_pressure2, water_pressure_crack;
+  SensitivityOptions sensitivity;
   OutputOptions output;
 };
 

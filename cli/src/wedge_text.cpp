@@ -158,12 +158,12 @@ std::string closing(const WedgeResult& r) {
 }  // namespace
 
 std::string wedge_text(const WedgeCase& wedge, const WedgeResult& result,
-                       const std::optional<WedgeSupport>& support) {
+                       const std::optional<WedgeSupport>& support, const std::string& more) {
   if (!result.forms) {
-    return heading(wedge) + paragraph("No wedge forms: " + result.reason + ".");
+    return heading(wedge) + paragraph("No wedge forms: " + result.reason + ".") + more;
   }
   return heading(wedge) + size_text(result) + '\n' + planes_table(result) + '\n' +
-         balance_text(result) + (support ? support_text(*support) : "") + closing(result);
+         balance_text(result) + (support ? support_text(*support) : "") + more + closing(result);
 }
 
 }  // namespace brink::cli

@@ -8,9 +8,10 @@
 
 namespace brink::cli {
 
-// Geometry, forces, mode and factor of safety; the cautions close it. For a wedge that does not
-// form, why.
+// Geometry, forces, mode and factor of safety, then `more`; the cautions close it. For a wedge that
+// does not form, why.
 std::string wedge_text(const WedgeCase& wedge, const WedgeResult& result,
-                       const std::optional<WedgeSupport>& support = {});
+                       const std::optional<WedgeSupport>& support = {},
+                       const std::string& more = {});
 
 }  // namespace brink::cli

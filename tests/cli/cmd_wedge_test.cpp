@@ -120,6 +120,25 @@ TEST(CmdWedge, EverySize) {
   EXPECT_EQ(wedge({"--friction", "30", "--volume", "5"}).status, 2);
 }
 
+TEST(CmdWedge, VaryAndSolve) {
+  const auto r =
+      document({"--friction", "30", "--cohesion", "15", "--target", "1.6", "--vary",
+                "friction=20..40:5", "--vary", "water-fill=0..1", "--solve", "height"})["result"];
+  const auto& curves = r["sensitivity"]["curves"];
+  ASSERT_EQ(curves.size(), 2U);
+  EXPECT_EQ(curves[0]["points"].size(), 5U);
+  EXPECT_EQ(curves[1]["points"].size(), 21U);
+  EXPECT_EQ(curves[1]["unit"], "");
+  EXPECT_EQ(r["sensitivity"]["ranked"].size(), 2U);
+  ASSERT_EQ(r["solve"]["values"].size(), 1U);
+  const std::string height = r["solve"]["values"][0]["value"].dump();
+  const auto back = nlohmann::json::parse(
+      wedge({"--friction", "30", "--cohesion", "15", "--json"}, {"--height", height}).out);
+  EXPECT_NEAR(back["result"]["factor_of_safety"].get<double>(), 1.6, 1e-9);
+  const Outcome none = wedge({"--friction", "30", "--target", "90", "--solve", "water-fill"});
+  EXPECT_TRUE(has(none.out, "No water-fill from 0 to 1 brings the factor of safety to 90."));
+}
+
 struct BadLine {
   Words more;
   std::string names;
@@ -143,6 +162,13 @@ TEST(CmdWedge, RefusesContradictionsAndGaps) {
       {{"--friction", "30", "--bolt-plunge", "0..10"}, "--bolt-plunge"},
       {{"--friction", "30", "--target", "1.5", "--bolt-plunge", "20..10"}, "--bolt-plunge"},
       {{"--friction", "30", "--target", "0"}, "--target"},
+      {{"--friction", "30", "--vary", "friction"}, "--vary"},
+      {{"--friction", "30", "--vary", "frictoin=2..3"}, "--vary"},
+      {{"--friction", "30", "--vary", "friction=-2..3"}, "--vary"},
+      {{"--friction", "30", "--vary", "friction=2..3:1"}, "--vary"},
+      {{"--friction", "30", "--vary", "bolt-force=2..3"}, "bolt-force"},
+      {{"--friction", "30", "--solve", "friction"}, "--solve"},
+      {{"--friction", "30", "-o", "x.csv"}, "--output"},
       {{"--friction", "30", "--load", "-10@20/30"}, "--load"},
       {{"--friction", "30", "--bolt-action", "fixed"}, "--bolt-action"},
   };

@@ -136,7 +136,7 @@ Value wedge_inputs(const WedgeCase& w, const WedgeResult& result,
                 {"target", target_value(target)}};
 }
 
-Value wedge_value(const WedgeResult& r, const std::optional<WedgeSupport>& support) {
+Object wedge_value(const WedgeResult& r, const std::optional<WedgeSupport>& support) {
   Object object{{"forms", r.forms},
                 {"reason", r.forms ? Value() : Value(r.reason)},
                 {"line", r.line ? line_value(*r.line) : Value()}};

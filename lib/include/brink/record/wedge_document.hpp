@@ -12,6 +12,6 @@ Value wedge_inputs(const WedgeCase& wedge, const WedgeResult& result,
 
 // Every key is always there; what does not exist (a wedge that does not form has no volume, a block
 // that lifts no driving force, a target that no bolt reaches no force) is null.
-Value wedge_value(const WedgeResult& result, const std::optional<WedgeSupport>& support = {});
+Object wedge_value(const WedgeResult& result, const std::optional<WedgeSupport>& support = {});
 
 }  // namespace brink
