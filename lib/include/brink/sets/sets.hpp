@@ -9,15 +9,9 @@
 #include <vector>
 
 #include "brink/readings/readings.hpp"
+#include "brink/sphere/goodness.hpp"
 
 namespace brink {
-
-// Goodness of fit of the Fisher distribution to one set (sphere/goodness.hpp).
-struct FisherFit {
-  std::string test;  // name of the test
-  double statistic = 0.0;
-  double p_value = 0.0;
-};
 
 // Statistics of one set; estimators and sources in sphere/fisher.hpp and sphere/tensor.hpp. A value
 // that the data cannot give (one reading has no kappa) is absent.
