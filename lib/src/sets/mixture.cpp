@@ -95,14 +95,20 @@ Component next_fisher(const Component& old, const KernelSums& sums) {
   return next;
 }
 
-// Least value of sum (ln a + s/a) over a with the smallest at least 1/kGreatestKappa of the
-// largest, given descending s: where the bound binds, the smallest one or two follow the largest.
+// Where sum (ln a + s/a) is least with the smallest a at least 1/kGreatestKappa of the largest,
+// given descending s. Where the bound binds, the smallest follows the largest, and the middle one
+// joins whichever of the two it would pass.
 Vector3 bounded_variances(const Vector3& s) {
-  if (s(2) * kGreatestKappa >= s(0)) return s;
-  const double one = (s(0) + kGreatestKappa * s(2)) / 2.0;
-  if (s(1) * kGreatestKappa >= one) return {one, s(1), one / kGreatestKappa};
-  const double both = (s(0) + kGreatestKappa * (s(1) + s(2))) / 3.0;
-  return {both, both / kGreatestKappa, both / kGreatestKappa};
+  constexpr double k = kGreatestKappa;
+  if (s(2) * k >= s(0)) return s;
+  const double free = (s(0) + k * s(2)) / 2.0;
+  if (s(1) > free) {
+    const double tied = (s(0) + s(1) + k * s(2)) / 3.0;
+    return {tied, tied, tied / k};
+  }
+  if (s(1) * k >= free) return {free, s(1), free / k};
+  const double tied = (s(0) + k * (s(1) + s(2))) / 3.0;
+  return {tied, tied / k, tied / k};
 }
 
 Component next_elliptical(const Component& old, const KernelSums& sums) {

@@ -22,6 +22,8 @@ constexpr std::array kPeakKappas = {8.0, 40.0};
 // where readings crowd.
 constexpr std::size_t kPeakTrials = 200;
 
+constexpr double kLeastStartUniform = 0.02;
+
 // A with variances 1 along the mean and 1/kappa across.
 Eigen::Matrix3d round_scatter(const Vector3& mean, double kappa) {
   const Eigen::Matrix3d along = mean * mean.transpose();
@@ -85,9 +87,12 @@ Component with_shape(const Component& component, Shape shape) {
 
 Mixture with_added(const Mixture& mixture, const Vector3& axis, double kappa, Shape shape) {
   const double share = 1.0 / (static_cast<double>(mixture.components.size()) + 2.0);
+  // EM can't revive a uniform part of weight 0, so it starts with a little.
+  const double uniform = std::max(mixture.uniform_weight, kLeastStartUniform);
+  const double scale = (1.0 - share) / (1.0 - mixture.uniform_weight + uniform);
   Mixture result = mixture;
-  result.uniform_weight = std::max(result.uniform_weight, 0.02) * (1.0 - share);
-  for (Component& c : result.components) c.weight *= 1.0 - share;
+  result.uniform_weight = uniform * scale;
+  for (Component& c : result.components) c.weight *= scale;
   result.components.push_back(component_at(axis, kappa, shape, share));
   return result;
 }

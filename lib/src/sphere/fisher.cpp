@@ -122,13 +122,13 @@ std::optional<double> kappa_maximum_likelihood(const Resultant& sample) {
   return kappa_of_mean_cosine(sample.length / sample.count);
 }
 
-std::optional<Interval> kappa_interval(const Resultant& sample, double level) {
+std::optional<KappaInterval> kappa_interval(const Resultant& sample, double level) {
   assert(level > 0.0 && level < 1.0);
   if (!strictly_above(sample.count, 1.0) || identical(sample)) return std::nullopt;
   const boost::math::chi_squared chi(2.0 * (sample.count - 1.0));
   const double scale = 2.0 * (sample.count - sample.length);
   const double tail = (1.0 - level) / 2.0;
-  return Interval{quantile(chi, tail) / scale, quantile(complement(chi, tail)) / scale};
+  return KappaInterval{quantile(chi, tail) / scale, quantile(complement(chi, tail)) / scale};
 }
 
 std::optional<Angle> confidence_cone(const Resultant& sample, double level) {

@@ -107,10 +107,6 @@ std::array<double, 3> as_array(const FisherFitStatistics& s) {
   return {s.colatitude, s.longitude, s.two_variable};
 }
 
-bool scatters(const Resultant& sample) {
-  return sample.count > 1.0 && strictly_below(sample.length / sample.count, 1.0);
-}
-
 FisherFitTests with_p_values(const std::array<double, 3>& observed,
                              const std::array<std::size_t, 3>& as_large, std::size_t used) {
   std::array<TestResult, 3> tests;
@@ -162,6 +158,10 @@ double chi_square_tail(double statistic, double freedom) {
 
 }  // namespace
 
+bool scatters(const Resultant& sample) {
+  return sample.count > 1.0 && strictly_below(sample.length / sample.count, 1.0);
+}
+
 FisherFitStatistics fisher_fit_statistics(std::span<const Vector3> vectors) {
   const Resultant sample = vector_resultant(vectors);
   assert(scatters(sample));
@@ -171,27 +171,17 @@ FisherFitStatistics fisher_fit_statistics(std::span<const Vector3> vectors) {
 }
 
 std::optional<FisherFitTests> fisher_fit(std::span<const Vector3> vectors,
-                                         const Replicate& replicate, std::size_t draws,
-                                         unsigned threads) {
-  if (vectors.size() < kLeastForFit || !scatters(vector_resultant(vectors))) return std::nullopt;
+                                         std::span<const FisherFitStatistics> replicates) {
+  if (vectors.size() < kLeastForFit || replicates.empty() || !scatters(vector_resultant(vectors))) {
+    return std::nullopt;
+  }
   const std::array<double, 3> observed = as_array(fisher_fit_statistics(vectors));
-  std::vector<std::optional<FisherFitStatistics>> drawn(draws);
-  for_each_chunk(draws, 16, threads, [&](std::size_t, std::size_t begin, std::size_t end) {
-    for (std::size_t d = begin; d < end; ++d) {
-      const std::vector<Vector3> sample = replicate(d);
-      if (scatters(vector_resultant(sample))) drawn[d] = fisher_fit_statistics(sample);
-    }
-  });
   std::array<std::size_t, 3> as_large{};
-  std::size_t used = 0;
-  for (const auto& one : drawn) {
-    if (!one) continue;
-    ++used;
-    const std::array<double, 3> values = as_array(*one);
+  for (const FisherFitStatistics& one : replicates) {
+    const std::array<double, 3> values = as_array(one);
     for (std::size_t k = 0; k < 3; ++k) as_large[k] += values[k] >= observed[k] ? 1 : 0;
   }
-  if (used == 0) return std::nullopt;
-  return with_p_values(observed, as_large, used);
+  return with_p_values(observed, as_large, replicates.size());
 }
 
 std::size_t fit_draws(std::size_t count) {
@@ -204,15 +194,18 @@ std::optional<FisherFitTests> fisher_fit_axes(std::span<const Vector3> axes, std
   const Resultant resultant = vector_resultant(sample);
   if (sample.size() < kLeastForFit || !scatters(resultant)) return std::nullopt;
   const double kappa = *kappa_fisher(resultant);
-  const auto replicate = [&](std::size_t draw) {
-    std::vector<Vector3> drawn;
-    drawn.reserve(sample.size());
-    for (std::size_t i = 0; i < sample.size(); ++i) {
-      drawn.push_back(draw_fisher(resultant.mean, kappa, seed, draw, i));
-    }
-    return turned_to_principal_axis(drawn);
-  };
-  return fisher_fit(sample, replicate, fit_draws(sample.size()), threads);
+  std::vector<FisherFitStatistics> replicates(fit_draws(sample.size()));
+  for_each_chunk(replicates.size(), 16, threads,
+                 [&](std::size_t, std::size_t begin, std::size_t end) {
+                   std::vector<Vector3> drawn(sample.size());
+                   for (std::size_t d = begin; d < end; ++d) {
+                     for (std::size_t i = 0; i < drawn.size(); ++i) {
+                       drawn[i] = draw_fisher(resultant.mean, kappa, seed, d, i);
+                     }
+                     replicates[d] = fisher_fit_statistics(turned_to_principal_axis(drawn));
+                   }
+                 });
+  return fisher_fit(sample, replicates);
 }
 
 std::optional<TestResult> bingham_uniformity(const OrientationTensor& tensor, double count) {

@@ -4,30 +4,52 @@
 #include <array>
 #include <cstdint>
 #include <optional>
+#include <span>
 #include <string>
 #include <string_view>
 #include <vector>
 
 #include "brink/readings/readings.hpp"
+#include "brink/sets/mixture.hpp"
+#include "brink/sphere/fisher.hpp"
 #include "brink/sphere/goodness.hpp"
 
 namespace brink {
 
+// Cone about the mean that holds a share of a Fisher distribution of the set's kappa.
+struct ContainmentCone {
+  double share = 0.0;
+  Angle half_angle;
+};
+
 // Statistics of one set; estimators and sources in sphere/fisher.hpp and sphere/tensor.hpp. A value
-// that the data cannot give (one reading has no kappa) is absent.
+// that the data cannot give (one reading has no kappa) is absent. The readings of the set are
+// counted whole, whatever their probability of belonging to it.
 struct SetStatistics {
   std::string name;       // "J1", or as the user's column names it
   std::size_t count = 0;  // readings
   double weight = 0.0;    // sum of their weights
+  double effective_number = 0.0;            // N of the formulas: (sum w)^2 / sum w^2
   Plane mean;
-  double resultant_length = 0.0;            // R, not R/N
+  double resultant_length = 0.0;            // R, not R/N; scaled to the effective number
   std::optional<double> fisher_k;           // (N-1)/(N-R); infinite for identical readings
+  std::optional<double> unbiased_k;         // (N-2)/(N-R)
+  std::optional<KappaInterval> k_interval;  // 95 %
   std::optional<Angle> confidence_cone;     // 95 % cone on the mean
-  std::optional<Angle> variability_cone;    // holds 68.27 % of a Fisher distribution of that kappa
+  std::optional<Angle> variability_cone;    // holds 68.27 % of a Fisher distribution of fisher_k
+  std::vector<ContainmentCone> containment; // for the shares asked for
   std::array<double, 3> eigenvalues{};      // of the orientation tensor, descending
+  std::array<Plane, 3> principal_planes{};  // whose normals are its eigenvectors, in that order
   std::optional<double> woodcock_shape;     // infinite where S2 = S3
   std::optional<double> woodcock_strength;  // infinite where S3 = 0
-  std::optional<FisherFit> fisher_fit;
+  std::optional<FisherFit> fisher_fit;      // the verdict of the three tests of goodness.hpp
+  std::optional<Shape> shape;               // of the component, where the set was found
+};
+
+// Least value of the criterion with this number of sets.
+struct CountTried {
+  std::size_t count = 0;
+  double bic = 0.0;
 };
 
 // Sets by weight, heaviest first, then by first appearance.
@@ -35,23 +57,48 @@ struct SetsResult {
   std::vector<SetStatistics> sets;
   std::vector<int> assignment;  // one a reading: 0 none, k the k-th set
   std::size_t unassigned = 0;
-  std::optional<double> log_likelihood;  // absent where membership was given
+  std::optional<double> log_likelihood;  // over the whole sphere; absent where membership was given
   std::optional<double> bic;
+  std::vector<CountTried> tried;           // by count; one entry where the count was fixed
+  std::optional<CountTried> runner_up;     // next best count, where the count was chosen
+  bool undecided = false;                  // the runner-up is less than kDecided behind
+  std::optional<Mixture> mixture;          // components in the order of `sets`
+  std::optional<TestResult> uniformity;    // Bingham's test on all readings
   std::vector<std::string> warnings;
 };
 
+// A difference in the criterion below 2 is not worth a bare mention (Kass & Raftery 1995, J. Am.
+// Stat. Assoc. 90).
+inline constexpr double kDecided = 2.0;
+
 struct FindSetsOptions {
   std::optional<std::size_t> count;  // fixed number of sets; chosen by the criterion where absent
+  std::vector<double> containment_shares;  // each above 0 and below 1
   std::uint64_t seed = 1;
   unsigned threads = 0;
 };
 
-// Finds the sets by the mixture of sets/mixture.hpp. At least one reading is needed; no set at all
-// is a result.
+// Finds the sets by the mixture of sets/mixture.hpp; the number and shape of components by the
+// least BIC. A reading belongs to the likeliest component, or to none where the uniform part is
+// likelier. Axial throughout: a set that straddles the rim of the net is one set. At least one
+// reading is needed; no set at all is a result. Names are J1, J2, ... by weight.
+// The p value of fisher_fit is that of samples drawn from the mixture with round components and
+// divided by the same rule, because a set cut out of a mixture is no longer a whole sample.
 SetsResult find_sets(const Readings& readings, const FindSetsOptions& options);
 
 // Describes the sets that an extra column names; empty cells and "0" are no set. Throws
 // ErrorKind::argument where there is no such column.
 SetsResult sets_by_column(const Readings& readings, std::string_view heading);
+
+// Describes the sets of a given membership: assignment[i] is 0 for none or the number of one of
+// `names`. The result is ordered by weight, then by first appearance; names that nothing carries
+// are left out.
+SetsResult sets_by_membership(const Readings& readings, std::span<const int> assignment,
+                              std::span<const std::string> names);
+
+// Statistics of one set of axes, without the test of fit. At least one axis.
+SetStatistics describe_set(std::string name, std::span<const Vector3> axes,
+                           std::span<const double> weights,
+                           std::span<const double> containment_shares = {});
 
 }  // namespace brink

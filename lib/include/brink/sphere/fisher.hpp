@@ -51,13 +51,14 @@ std::optional<double> kappa_unbiased(const Resultant& sample);
 // Maximum likelihood, A(kappa) = R/N; too large by about N/(N-2). Needs N above 1.
 std::optional<double> kappa_maximum_likelihood(const Resultant& sample);
 
-struct Interval {
+// Ends of an interval of confidence.
+struct KappaInterval {
   double low = 0.0;
   double high = 0.0;
 };
 // Interval for kappa from 2 kappa (N-R) ~ chi-square with 2(N-1) degrees of freedom (Watson 1956,
 // Geophys. Suppl. Mon. Not. R. astr. Soc. 7; FLE 5.3.2). 0 < level < 1. Needs N above 1 and R < N.
-std::optional<Interval> kappa_interval(const Resultant& sample, double level = 0.95);
+std::optional<KappaInterval> kappa_interval(const Resultant& sample, double level = 0.95);
 
 // Half angle of the cone about the sample mean that holds the true mean with confidence `level`
 // (Fisher 1953): cos a = 1 - ((N-R)/R) (p^(-1/(N-1)) - 1), p = 1 - level. Absent for N at most 1,

@@ -3,11 +3,9 @@
 
 #include <cstddef>
 #include <cstdint>
-#include <functional>
 #include <optional>
 #include <span>
 #include <string>
-#include <vector>
 
 #include "brink/sphere/fisher.hpp"
 #include "brink/sphere/tensor.hpp"
@@ -19,6 +17,9 @@ struct TestResult {
   double statistic = 0.0;
   double p_value = 0.0;
 };
+
+// Whether R < N: identical directions say nothing about a distribution.
+bool scatters(const Resultant& sample);
 
 // Statistics of the three tests of fit of Fisher & Best 1984 (Austral. J. Statist. 26:142; FLE
 // 5.3.2), larger for a worse fit. In axes in which the sample mean is the pole:
@@ -47,15 +48,13 @@ struct FisherFitTests {
 };
 
 // The p values are those of a parametric bootstrap: the tables of the three tests hold for a narrow
-// range of sizes only, and not at all for a set that was cut out of a larger sample. `replicate(d)`
-// gives the d-th sample drawn under the hypothesis, treated as the data were (turned, cut, ...); one
-// with fewer than 2 vectors is left out. p = (1 + replicates at least as large) / (1 + replicates).
-// Absent for fewer than kLeastForFit vectors and for identical ones.
+// range of sizes only, and not at all for a set that was cut out of a larger sample. `replicates`
+// are the statistics of samples drawn under the hypothesis and treated as the data were (turned,
+// cut). p = (1 + replicates at least as large) / (1 + replicates). Absent for fewer than
+// kLeastForFit vectors, for identical ones, and without replicates.
 inline constexpr std::size_t kLeastForFit = 8;
-using Replicate = std::function<std::vector<Vector3>(std::size_t draw)>;
 std::optional<FisherFitTests> fisher_fit(std::span<const Vector3> vectors,
-                                         const Replicate& replicate, std::size_t draws,
-                                         unsigned threads = 0);
+                                         std::span<const FisherFitStatistics> replicates);
 // For a whole sample of axes, with Fisher replicates of the same size and kappa. Samples above 1000
 // are thinned to every n-th axis: the cost stays bounded, and what 1000 axes can't show is no
 // practical misfit.
