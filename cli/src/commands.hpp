@@ -18,7 +18,7 @@ Command report_command();
 
 // In the order of the help. A command joins the list when it works.
 inline std::vector<Command> all_commands() {
-  return {readings_command(), wedge_command(), plane_command(), topple_command()};
+  return {readings_command(), sets_command(), wedge_command(), plane_command(), topple_command()};
 }
 
 }  // namespace brink::cli

@@ -20,10 +20,10 @@ struct Scenario {
 
 // How a family's sets scatter about their means.
 enum class Family {
-  fisher,      // Fisher, kappa 10 to 80
-  cauchy,      // angular central Gaussian: elliptical with very heavy tails
-  student,     // elliptical Student, 4 degrees of freedom, on the gnomonic plane
-  normal,      // elliptical normal on the gnomonic plane: no heavy tails
+  fisher,   // Fisher, kappa 10 to 80
+  cauchy,   // angular central Gaussian: elliptical with very heavy tails
+  student,  // elliptical Student, 4 degrees of freedom, on the gnomonic plane
+  normal,   // elliptical normal on the gnomonic plane: no heavy tails
 };
 
 struct Recipe {

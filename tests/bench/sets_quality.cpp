@@ -41,8 +41,7 @@ void compare_means(const Scenario& scenario, const SetsResult& result, Score& sc
   for (const SetStatistics& t : truth.sets) {
     double nearest = 90.0;
     for (const SetStatistics& f : result.sets) {
-      nearest =
-          std::min(nearest, axis_angle(upward_normal(t.mean), upward_normal(f.mean)).deg());
+      nearest = std::min(nearest, axis_angle(upward_normal(t.mean), upward_normal(f.mean)).deg());
     }
     error += nearest / static_cast<double>(truth.sets.size());
   }
@@ -55,8 +54,7 @@ Score judge(const Scenario& scenario, double best) {
   const auto begin = std::chrono::steady_clock::now();
   const SetsResult result = find_sets(scenario.readings, options);
   Score score;
-  score.seconds =
-      std::chrono::duration<double>(std::chrono::steady_clock::now() - begin).count();
+  score.seconds = std::chrono::duration<double>(std::chrono::steady_clock::now() - begin).count();
   score.index = test::adjusted_rand_index(result.assignment, scenario.truth);
   score.best = best;
   score.found = result.sets.size();
@@ -68,11 +66,12 @@ Score judge(const Scenario& scenario, double best) {
 }
 
 void print(const Scenario& scenario, const Score& s) {
-  fmt::print("{:<22} n {:>6} sets {} found {} ({} ell.){} index {:.4f} best {:.4f} ratio {:.3f} "
-             "mean err {:.2f} {:.2f} s\n",
-             scenario.name, scenario.readings.size(), scenario.sets, s.found, s.elliptical,
-             s.undecided ? fmt::format(" or {}", s.runner_up) : "", s.index, s.best,
-             s.best > 0 ? s.index / s.best : 0.0, s.mean_error_deg, s.seconds);
+  fmt::print(
+      "{:<22} n {:>6} sets {} found {} ({} ell.){} index {:.4f} best {:.4f} ratio {:.3f} "
+      "mean err {:.2f} {:.2f} s\n",
+      scenario.name, scenario.readings.size(), scenario.sets, s.found, s.elliptical,
+      s.undecided ? fmt::format(" or {}", s.runner_up) : "", s.index, s.best,
+      s.best > 0 ? s.index / s.best : 0.0, s.mean_error_deg, s.seconds);
   std::fflush(stdout);
 }
 
@@ -96,9 +95,10 @@ void add(Summary& summary, const Scenario& scenario, const Score& score) {
 
 void print(const std::map<std::string, Summary>& summaries) {
   for (const auto& [name, s] : summaries) {
-    fmt::print("{}: {} files, index ratio {:.4f} on average, worst {:.3f}; right number in {} of "
-               "{} with 100 readings or more\n",
-               name, s.files, s.ratio / static_cast<double>(s.files), s.worst, s.right, s.large);
+    fmt::print(
+        "{}: {} files, index ratio {:.4f} on average, worst {:.3f}; right number in {} of "
+        "{} with 100 readings or more\n",
+        name, s.files, s.ratio / static_cast<double>(s.files), s.worst, s.right, s.large);
   }
 }
 

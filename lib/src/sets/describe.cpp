@@ -77,7 +77,7 @@ SetStatistics describe_set(std::string name, std::span<const Vector3> axes,
 }
 
 SetsResult sets_by_membership(const Readings& readings, std::span<const int> assignment,
-                              std::span<const std::string> names) {
+                              std::span<const std::string> names, const FindSetsOptions& options) {
   assert(assignment.size() == readings.size());
   SetsResult result;
   result.assignment.assign(readings.size(), 0);
@@ -91,7 +91,7 @@ SetsResult sets_by_membership(const Readings& readings, std::span<const int> ass
       result.assignment[i] = place;
     }
     const std::string& name = names[static_cast<std::size_t>(group.number) - 1];
-    result.sets.push_back(describe_set(name, axes, weights));
+    result.sets.push_back(describe_set(name, axes, weights, options.containment_shares));
   }
   result.unassigned =
       static_cast<std::size_t>(std::count(result.assignment.begin(), result.assignment.end(), 0));

@@ -45,8 +45,8 @@ void elliptical_densities(const KernelComponent& c, const Axes& axes, double* __
     const double x = axes.x[i];
     const double y = axes.y[i];
     const double z = axes.z[i];
-    const double form = x * (q[0] * x + q[3] * y + q[4] * z) + y * (q[1] * y + q[5] * z) +
-                        q[2] * z * z;
+    const double form =
+        x * (q[0] * x + q[3] * y + q[4] * z) + y * (q[1] * y + q[5] * z) + q[2] * z * z;
     const double inverse = 1.0 / form;
     const double f = c.factor * inverse * std::sqrt(inverse);
     density[i] = f;
@@ -135,7 +135,8 @@ KernelComponent kernel_component(const Component& component) {
   }
   const Eigen::Matrix3d inverse = component.scatter.inverse();
   k.elliptical = true;
-  k.factor = component.weight / (4.0 * std::numbers::pi * std::sqrt(component.scatter.determinant()));
+  k.factor =
+      component.weight / (4.0 * std::numbers::pi * std::sqrt(component.scatter.determinant()));
   k.q = {inverse(0, 0),       inverse(1, 1),       inverse(2, 2),
          2.0 * inverse(0, 1), 2.0 * inverse(0, 2), 2.0 * inverse(1, 2)};
   return k;

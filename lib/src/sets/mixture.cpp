@@ -90,8 +90,7 @@ Component next_fisher(const Component& old, const KernelSums& sums) {
   const Vector3 v(sums.moment[0], sums.moment[1], sums.moment[2]);
   const double length = v.norm();
   if (length > 0.0) next.mean = v / length;
-  next.kappa =
-      std::clamp(kappa_of_mean_cosine(length / sums.weight), kLeastKappa, kGreatestKappa);
+  next.kappa = std::clamp(kappa_of_mean_cosine(length / sums.weight), kLeastKappa, kGreatestKappa);
   return next;
 }
 
@@ -146,8 +145,7 @@ Mixture maximised(const Mixture& old, const ChunkSums& sums) {
 }
 
 // The likeliest part at place i of a block; ties go to the lowest number.
-int likeliest(const KernelScratch& scratch, std::size_t components, double uniform,
-              std::size_t i) {
+int likeliest(const KernelScratch& scratch, std::size_t components, double uniform, std::size_t i) {
   int best = 0;
   double greatest = uniform;
   for (std::size_t j = 0; j < components; ++j) {
@@ -183,7 +181,8 @@ MixtureFit fit_mixture(const Mixture& start, const AxisSample& sample, const Fit
   for (std::size_t i = 0;; ++i) {
     EmStep step = em_step(fit.mixture, sample, threads);
     // Rounding of a sum of that many terms is all that the likelihood may lose.
-    assert(fit.trace.empty() || step.log_likelihood >= fit.trace.back() - 1e-9 * sample.total_weight);
+    assert(fit.trace.empty() ||
+           step.log_likelihood >= fit.trace.back() - 1e-9 * sample.total_weight);
     fit.converged = !fit.trace.empty() && step.log_likelihood - fit.trace.back() <= least_gain;
     fit.trace.push_back(step.log_likelihood);
     fit.log_likelihood = step.log_likelihood;
@@ -199,8 +198,7 @@ std::size_t parameter_count(const Mixture& mixture) {
 }
 
 double bic(const Mixture& mixture, double log_likelihood, double count) {
-  return -2.0 * log_likelihood +
-         static_cast<double>(parameter_count(mixture)) * std::log(count);
+  return -2.0 * log_likelihood + static_cast<double>(parameter_count(mixture)) * std::log(count);
 }
 
 std::vector<int> classify(const Mixture& mixture, const AxisSample& sample) {

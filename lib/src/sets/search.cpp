@@ -18,10 +18,10 @@ constexpr double kSearchCell_deg = 1.5;
 constexpr FitLimits kScreen{25, 1e-6};
 constexpr FitLimits kFinish{300, 1e-8};
 constexpr FitLimits kRefine{2000, 1e-11};
-constexpr std::size_t kFinished = 4;       // starts of each count that are finished
-constexpr std::size_t kSpreadStarts = 4;   // of each shape
+constexpr std::size_t kFinished = 4;      // starts of each count that are finished
+constexpr std::size_t kSpreadStarts = 4;  // of each shape
 constexpr std::size_t kPeaks = 4;
-constexpr std::size_t kBeyondBest = 3;     // counts tried past the best one
+constexpr std::size_t kBeyondBest = 3;  // counts tried past the best one
 constexpr std::size_t kGreatestCount = 30;
 
 class Search {
@@ -60,9 +60,9 @@ bool all_of_shape(const Mixture& mixture, Shape shape) {
 }
 
 bool Search::fits(const Mixture& mixture) const {
-  return std::all_of(
-      mixture.components.begin(), mixture.components.end(),
-      [&](const Component& c) { return c.weight * sample_.total_weight >= options_.least_weight; });
+  return std::all_of(mixture.components.begin(), mixture.components.end(), [&](const Component& c) {
+    return c.weight * sample_.total_weight >= options_.least_weight;
+  });
 }
 
 // Candidates in the order of their starts; those with too small a component are left out.
@@ -71,8 +71,7 @@ std::vector<Candidate> Search::fitted(const std::vector<Mixture>& starts,
   std::vector<Candidate> all(starts.size());
   for_each_chunk(starts.size(), 1, options_.threads, [&](std::size_t i, std::size_t, std::size_t) {
     all[i].fit = fit_mixture(starts[i], sample_, limits);
-    all[i].criterion =
-        bic(all[i].fit.mixture, all[i].fit.log_likelihood, sample_.total_weight);
+    all[i].criterion = bic(all[i].fit.mixture, all[i].fit.log_likelihood, sample_.total_weight);
   });
   std::erase_if(all, [&](const Candidate& c) { return !fits(c.fit.mixture); });
   std::stable_sort(all.begin(), all.end(), [](const Candidate& a, const Candidate& b) {

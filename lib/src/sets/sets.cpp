@@ -20,7 +20,8 @@ constexpr std::size_t kFewReadings = 5;
 
 std::vector<std::string> default_names(std::size_t count) {
   std::vector<std::string> names;
-  for (std::size_t k = 1; k <= count; ++k) names.push_back(std::string("J").append(std::to_string(k)));
+  for (std::size_t k = 1; k <= count; ++k)
+    names.push_back(std::string("J").append(std::to_string(k)));
   return names;
 }
 
@@ -73,9 +74,8 @@ void warn(SetsResult& result, const FindSetsOptions& options) {
         result.runner_up->count));
   }
   if (options.count && result.sets.size() < *options.count) {
-    result.warnings.push_back(
-        fmt::format("{} sets were asked for, but the readings give only {}", *options.count,
-                    result.sets.size()));
+    result.warnings.push_back(fmt::format("{} sets were asked for, but the readings give only {}",
+                                          *options.count, result.sets.size()));
   }
   for (const SetStatistics& s : result.sets) {
     if (s.count >= kFewReadings) continue;
@@ -120,19 +120,20 @@ SetsResult find_sets(const Readings& readings, const FindSetsOptions& options) {
   std::vector<int> labels;
   for (const std::size_t at : sample.merged) labels.push_back(by_axis[at]);
   SetsResult result =
-      sets_by_membership(readings, labels, default_names(mixture.components.size()));
+      sets_by_membership(readings, labels, default_names(mixture.components.size()), options);
   const std::vector<std::string> names = default_names(result.sets.size());
   for (std::size_t k = 0; k < names.size(); ++k) result.sets[k].name = names[k];
   result.mixture = reordered(mixture, component_of_set(result, labels));
   add_fits(result, readings, options);
   note_counts(result, search, options);
-  result.uniformity =
-      bingham_uniformity(orientation_tensor(readings.normals, readings.weights), sample.total_weight);
+  result.uniformity = bingham_uniformity(orientation_tensor(readings.normals, readings.weights),
+                                         sample.total_weight);
   warn(result, options);
   return result;
 }
 
-SetsResult sets_by_column(const Readings& readings, std::string_view heading) {
+SetsResult sets_by_column(const Readings& readings, std::string_view heading,
+                          const FindSetsOptions& options) {
   const ExtraColumn* column = readings.find_column(heading);
   if (column == nullptr) throw_no_column(readings, heading);
   std::vector<std::string> names;
@@ -141,17 +142,19 @@ SetsResult sets_by_column(const Readings& readings, std::string_view heading) {
   for (std::size_t i = 0; i < readings.size(); ++i) {
     const std::string_view name = trimmed(column->cells[i]);
     if (name.empty() || name == "0") continue;
-    const auto [at, added] = numbers.try_emplace(std::string(name), static_cast<int>(names.size()) + 1);
+    const auto [at, added] =
+        numbers.try_emplace(std::string(name), static_cast<int>(names.size()) + 1);
     if (added) names.emplace_back(name);
     assignment[i] = at->second;
   }
-  SetsResult result = sets_by_membership(readings, assignment, names);
+  SetsResult result = sets_by_membership(readings, assignment, names, options);
   for (std::size_t k = 0; k < result.sets.size(); ++k) {
     std::vector<Vector3> axes;
     for (std::size_t i = 0; i < readings.size(); ++i) {
       if (result.assignment[i] == static_cast<int>(k) + 1) axes.push_back(readings.normals[i]);
     }
-    if (const auto fit = fisher_fit_axes(axes)) result.sets[k].fisher_fit = fit->verdict;
+    if (const auto fit = fisher_fit_axes(axes, options.seed, options.threads))
+      result.sets[k].fisher_fit = fit->verdict;
   }
   if (readings.size() > 0) {
     const OrientationTensor tensor = orientation_tensor(readings.normals, readings.weights);

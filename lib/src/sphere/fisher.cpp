@@ -17,8 +17,8 @@ namespace brink {
 namespace {
 
 constexpr double kInfinite = std::numeric_limits<double>::infinity();
-// Below this kappa the closed forms cancel and the first terms of the series are exact to rounding.
-constexpr double kSmallKappa = 1e-2;
+// Below this kappa the closed forms cancel, and five terms of the series are exact to rounding.
+constexpr double kSmallKappa = 0.1;
 // Above this kappa exp(-2 kappa) is nothing beside 1 and sinh would soon overflow.
 constexpr double kLargeKappa = 300.0;
 
@@ -39,7 +39,10 @@ std::optional<double> kappa_with(const Resultant& sample, double loss) {
 
 // dA/dkappa = 1/kappa^2 - 1/sinh^2 kappa.
 double mean_cosine_slope(double kappa) {
-  if (kappa < kSmallKappa) return 1.0 / 3.0 - kappa * kappa / 15.0;
+  if (kappa < kSmallKappa) {
+    const double k2 = kappa * kappa;
+    return 1.0 / 3.0 - k2 * (1.0 / 15.0 - k2 * (2.0 / 189.0 - k2 / 675.0));
+  }
   const double s = std::exp(-kappa);
   const double cosecant = 2.0 * s / (1.0 - s * s);
   return 1.0 / (kappa * kappa) - cosecant * cosecant;
@@ -89,7 +92,9 @@ Resultant axial_resultant(std::span<const Vector3> axes, std::span<const double>
 double mean_cosine(double kappa) {
   if (kappa < kSmallKappa) {
     const double k2 = kappa * kappa;
-    return kappa * (1.0 / 3.0 - k2 * (1.0 / 45.0 - k2 * 2.0 / 945.0));
+    return kappa *
+           (1.0 / 3.0 -
+            k2 * (1.0 / 45.0 - k2 * (2.0 / 945.0 - k2 * (1.0 / 4725.0 - k2 * 2.0 / 93555.0))));
   }
   return 1.0 / std::tanh(kappa) - 1.0 / kappa;
 }

@@ -34,7 +34,8 @@ OrientationTensor orientation_tensor(std::span<const Vector3> axes,
 OrientationTensor decompose(const Eigen::Matrix3d& symmetric) {
   OrientationTensor tensor;
   tensor.matrix = symmetric / symmetric.trace();
-  // The iterative solver, not the closed form: it keeps full accuracy where eigenvalues nearly meet.
+  // The iterative solver, not the closed form: it keeps full accuracy where eigenvalues nearly
+  // meet.
   const Eigen::SelfAdjointEigenSolver<Eigen::Matrix3d> solver(tensor.matrix);
   for (int k = 0; k < 3; ++k) {
     const auto slot = static_cast<std::size_t>(k);

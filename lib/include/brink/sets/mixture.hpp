@@ -30,9 +30,9 @@ inline constexpr double kGreatestKappa = 2000.0;
 struct Component {
   Shape shape = Shape::fisher;
   double weight = 0.0;
-  Vector3 mean = Vector3::UnitZ();                           // elliptical: principal axis of A
-  double kappa = kLeastKappa;                                // Fisher only
-  Eigen::Matrix3d scatter = Eigen::Matrix3d::Identity();     // A, elliptical only; trace 3
+  Vector3 mean = Vector3::UnitZ();                        // elliptical: principal axis of A
+  double kappa = kLeastKappa;                             // Fisher only
+  Eigen::Matrix3d scatter = Eigen::Matrix3d::Identity();  // A, elliptical only; trace 3
 };
 
 struct Mixture {
@@ -48,9 +48,9 @@ double log_density(const Component& component, const Vector3& axis);
 // data has at most 32,760 distinct planes.
 struct AxisSample {
   std::vector<double> x, y, z, weight;
-  std::size_t size = 0;               // distinct axes; the arrays are padded beyond
-  std::vector<std::size_t> merged;    // for each reading, its place in the arrays
-  double total_weight = 0.0;          // the effective number (sum w)^2 / sum w^2 of the readings
+  std::size_t size = 0;             // distinct axes; the arrays are padded beyond
+  std::vector<std::size_t> merged;  // for each reading, its place in the arrays
+  double total_weight = 0.0;        // the effective number (sum w)^2 / sum w^2 of the readings
   Vector3 axis(std::size_t i) const { return {x[i], y[i], z[i]}; }
 };
 // Weights above 0, one a reading, or none for 1 each; scaled to sum to the effective number, so

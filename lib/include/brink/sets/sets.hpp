@@ -26,24 +26,24 @@ struct ContainmentCone {
 // that the data cannot give (one reading has no kappa) is absent. The readings of the set are
 // counted whole, whatever their probability of belonging to it.
 struct SetStatistics {
-  std::string name;       // "J1", or as the user's column names it
-  std::size_t count = 0;  // readings
-  double weight = 0.0;    // sum of their weights
-  double effective_number = 0.0;            // N of the formulas: (sum w)^2 / sum w^2
+  std::string name;               // "J1", or as the user's column names it
+  std::size_t count = 0;          // readings
+  double weight = 0.0;            // sum of their weights
+  double effective_number = 0.0;  // N of the formulas: (sum w)^2 / sum w^2
   Plane mean;
-  double resultant_length = 0.0;            // R, not R/N; scaled to the effective number
-  std::optional<double> fisher_k;           // (N-1)/(N-R); infinite for identical readings
-  std::optional<double> unbiased_k;         // (N-2)/(N-R)
-  std::optional<KappaInterval> k_interval;  // 95 %
-  std::optional<Angle> confidence_cone;     // 95 % cone on the mean
-  std::optional<Angle> variability_cone;    // holds 68.27 % of a Fisher distribution of fisher_k
-  std::vector<ContainmentCone> containment; // for the shares asked for
-  std::array<double, 3> eigenvalues{};      // of the orientation tensor, descending
-  std::array<Plane, 3> principal_planes{};  // whose normals are its eigenvectors, in that order
-  std::optional<double> woodcock_shape;     // infinite where S2 = S3
-  std::optional<double> woodcock_strength;  // infinite where S3 = 0
-  std::optional<FisherFit> fisher_fit;      // the verdict of the three tests of goodness.hpp
-  std::optional<Shape> shape;               // of the component, where the set was found
+  double resultant_length = 0.0;             // R, not R/N; scaled to the effective number
+  std::optional<double> fisher_k;            // (N-1)/(N-R); infinite for identical readings
+  std::optional<double> unbiased_k;          // (N-2)/(N-R)
+  std::optional<KappaInterval> k_interval;   // 95 %
+  std::optional<Angle> confidence_cone;      // 95 % cone on the mean
+  std::optional<Angle> variability_cone;     // holds 68.27 % of a Fisher distribution of fisher_k
+  std::vector<ContainmentCone> containment;  // for the shares asked for
+  std::array<double, 3> eigenvalues{};       // of the orientation tensor, descending
+  std::array<Plane, 3> principal_planes{};   // whose normals are its eigenvectors, in that order
+  std::optional<double> woodcock_shape;      // infinite where S2 = S3
+  std::optional<double> woodcock_strength;   // infinite where S3 = 0
+  std::optional<FisherFit> fisher_fit;       // the verdict of the three tests of goodness.hpp
+  std::optional<Shape> shape;                // of the component, where the set was found
 };
 
 // Least value of the criterion with this number of sets.
@@ -59,11 +59,11 @@ struct SetsResult {
   std::size_t unassigned = 0;
   std::optional<double> log_likelihood;  // over the whole sphere; absent where membership was given
   std::optional<double> bic;
-  std::vector<CountTried> tried;           // by count; one entry where the count was fixed
-  std::optional<CountTried> runner_up;     // next best count, where the count was chosen
-  bool undecided = false;                  // the runner-up is less than kDecided behind
-  std::optional<Mixture> mixture;          // components in the order of `sets`
-  std::optional<TestResult> uniformity;    // Bingham's test on all readings
+  std::vector<CountTried> tried;         // by count; one entry where the count was fixed
+  std::optional<CountTried> runner_up;   // next best count, where the count was chosen
+  bool undecided = false;                // the runner-up is less than kDecided behind
+  std::optional<Mixture> mixture;        // components in the order of `sets`
+  std::optional<TestResult> uniformity;  // Bingham's test on all readings
   std::vector<std::string> warnings;
 };
 
@@ -73,9 +73,9 @@ inline constexpr double kDecided = 2.0;
 
 struct FindSetsOptions {
   std::optional<std::size_t> count;  // fixed number of sets; chosen by the criterion where absent
-  std::vector<double> containment_shares;  // each above 0 and below 1
   std::uint64_t seed = 1;
   unsigned threads = 0;
+  std::vector<double> containment_shares = {};  // each above 0 and below 1
 };
 
 // Finds the sets by the mixture of sets/mixture.hpp; the number and shape of components by the
@@ -88,13 +88,15 @@ SetsResult find_sets(const Readings& readings, const FindSetsOptions& options);
 
 // Describes the sets that an extra column names; empty cells and "0" are no set. Throws
 // ErrorKind::argument where there is no such column.
-SetsResult sets_by_column(const Readings& readings, std::string_view heading);
+SetsResult sets_by_column(const Readings& readings, std::string_view heading,
+                          const FindSetsOptions& options = {});
 
 // Describes the sets of a given membership: assignment[i] is 0 for none or the number of one of
 // `names`. The result is ordered by weight, then by first appearance; names that nothing carries
-// are left out.
+// are left out. Of the options only containment_shares, seed and threads count.
 SetsResult sets_by_membership(const Readings& readings, std::span<const int> assignment,
-                              std::span<const std::string> names);
+                              std::span<const std::string> names,
+                              const FindSetsOptions& options = {});
 
 // Statistics of one set of axes, without the test of fit. At least one axis.
 SetStatistics describe_set(std::string name, std::span<const Vector3> axes,

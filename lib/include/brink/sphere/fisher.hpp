@@ -20,9 +20,9 @@ namespace brink {
 // scaled to the effective number (sum w)^2 / sum w^2 (Kish 1965, Survey Sampling), so that the
 // formulas below, written for equal weights, hold approximately.
 struct Resultant {
-  double count = 0.0;                 // N, or the effective number
-  double length = 0.0;                // R, between 0 and count
-  Vector3 mean = Vector3::UnitZ();    // direction of the sum; straight up where R is 0
+  double count = 0.0;               // N, or the effective number
+  double length = 0.0;              // R, between 0 and count
+  Vector3 mean = Vector3::UnitZ();  // direction of the sum; straight up where R is 0
 };
 
 // Of directions with a sense (vectors). An empty sample gives count 0.
@@ -40,7 +40,7 @@ std::vector<Vector3> turned_to_principal_axis(std::span<const Vector3> axes,
 
 // A(kappa) = coth kappa - 1/kappa, the mean cosine to the mean direction; 0 at kappa 0.
 double mean_cosine(double kappa);
-// Inverse of A for 0 <= r <= 1; infinite at 1. Relative error about 1e-14.
+// Inverse of A for 0 <= r <= 1; infinite at 1. Relative error below 1e-12.
 double kappa_of_mean_cosine(double r);
 
 // Estimators of kappa. Absent where the sample can't give one; infinite for identical directions.
@@ -70,8 +70,8 @@ std::optional<Angle> confidence_cone(const Resultant& sample, double level = 0.9
 Angle containment_cone(double kappa, double share);
 Angle containment_cone_axial(double kappa, double share);
 
-// ln of the axial density at an axis with cosine `t` to the mean, over the whole sphere; kappa >= 0.
-// `t` is read as |t|. Relative error about 1e-15 up to kappa 1e5.
+// ln of the axial density at an axis with cosine `t` to the mean, over the whole sphere; kappa >=
+// 0. `t` is read as |t|. Relative error about 1e-15 up to kappa 1e5.
 double log_axial_density(double kappa, double t);
 
 // The direction that the uniform numbers u, v in (0, 1) give: inverse of the distribution function,

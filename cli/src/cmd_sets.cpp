@@ -1,0 +1,141 @@
+// brink sets: finds the discontinuity sets, or describes those given.
+#include <memory>
+#include <ostream>
+
+#include "brink/base/error.hpp"
+#include "brink/record/readings_document.hpp"
+#include "brink/record/sets_document.hpp"
+#include "commands.hpp"
+#include "exit_status.hpp"
+#include "input.hpp"
+#include "output_file.hpp"
+#include "sets_text.hpp"
+
+namespace brink::cli {
+
+namespace {
+
+constexpr std::uint64_t kMostSets = 30;
+
+struct SetsRun {
+  InputOptions input;
+  OutputOptions output;
+  FindSetsOptions find;
+};
+
+Option count_option(SetsRun& run) {
+  Option option;
+  option.name = "--count";
+  option.value = "K";
+  option.help = "Number of sets, 0 to 30; chosen by the criterion where it is not given.";
+  option.take = [&run](std::string_view text) {
+    run.find.count = static_cast<std::size_t>(parse_whole("--count", text, 0, kMostSets));
+  };
+  return option;
+}
+
+Option containment_option(SetsRun& run) {
+  Option option;
+  option.name = "--containment";
+  option.value = "PCT";
+  option.help =
+      "Adds the half angle of the cone that holds this share of a Fisher distribution of the "
+      "set's kappa; above 0 and below 100.";
+  option.repeatable = true;
+  option.take = [&run](std::string_view text) {
+    const double percent = parse_number("--containment", text, between(0.0, 100.0, "per cent"));
+    run.find.containment_shares.push_back(percent / 100.0);
+  };
+  return option;
+}
+
+void check(const SetsRun& run) {
+  if (run.find.count && !run.input.set_column.empty()) {
+    throw Error(ErrorKind::argument, Place{.file = {}, .key = "--count"},
+                "is given together with --set-column, which says which sets there are", {},
+                "one of the two");
+  }
+  if (run.output.output.empty()) return;
+  if (run.output.output == "-" && run.output.json) {
+    throw Error(ErrorKind::argument, Place{.file = {}, .key = "-o"},
+                "would put a table where --json puts its document", "-", "a file, or no --json");
+  }
+  if (run.output.output != "-") known_ending("-o", run.output.output, {".csv"});
+}
+
+Value inputs_value(const Readings& readings, const SetsRun& run) {
+  Object inputs = input_record(readings, run.input);
+  const Object asked = sets_inputs(run.find);
+  for (const auto& [key, value] : asked.members()) inputs.add(key, value);
+  inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
+  return inputs;
+}
+
+void print(const Readings& readings, const SetsResult& result, const SetsRun& run,
+           Streams& streams) {
+  if (run.output.json) {
+    std::vector<std::string> warnings = readings.warnings;
+    warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
+    streams.out << to_json(
+        result_document("sets", inputs_value(readings, run), warnings, sets_result(result)));
+  } else if (run.output.output != "-") {
+    streams.out << sets_text(result, readings);
+  }
+}
+
+int run_sets(const std::vector<std::string>& files, const SetsRun& run, Streams& streams) {
+  check(run);
+  const Readings readings = load_readings(files, run.input, run.output, streams);
+  SetsResult result;
+  if (readings.size() > 0) {
+    result = run.input.set_column.empty()
+                 ? find_sets(readings, run.find)
+                 : sets_by_column(readings, run.input.set_column, run.find);
+  }
+  print_warnings(result.warnings, run.output, streams);
+  if (!run.output.output.empty() && readings.size() > 0) {
+    write_output(run.output.output, readings_csv(with_set_column(readings, result), {}),
+                 streams.out, files);
+  }
+  if (readings.size() > 0 || run.output.json) print(readings, result, run, streams);
+  require_usable(readings, run.input);
+  return kDone;
+}
+
+}  // namespace
+
+Command sets_command() {
+  const auto run = std::make_shared<SetsRun>();
+  Command command;
+  command.name = "sets";
+  command.summary = "Finds the discontinuity sets, or describes those given";
+  command.description =
+      "Divides the readings into sets and strays, as axes: a set that straddles the rim of the net "
+      "is one set. The number of sets is the one with the least Bayesian criterion; round and "
+      "elliptical sets compete. Every set gets its Fisher statistics, its 95 % cone and a test of "
+      "how well a Fisher distribution fits.";
+  command.positionals = Positionals::files;
+  command.options.push_back(count_option(*run));
+  command.options.push_back(set_column_option(run->input));
+  command.options.push_back(containment_option(*run));
+  add_input_options(command.options, run->input);
+  command.options.push_back(seed_option(run->find.seed));
+  command.options.push_back(threads_option(run->find.threads));
+  add_output_options(command.options, run->output);
+  command.options.push_back(output_option(
+      "OUT.csv",
+      "Writes the readings with the set of each as a CSV table; - writes it to standard "
+      "output.",
+      run->output));
+  command.examples = {
+      {"brink sets quarry/readings.csv", "How many sets there are, and how they scatter."},
+      {"brink sets quarry/readings.csv --count 3 -o sets.csv",
+       "Three sets, and the readings with the set of each."},
+  };
+  command.run = [run](const std::vector<std::string>& files, Streams& streams) {
+    return run_sets(files, *run, streams);
+  };
+  return command;
+}
+
+}  // namespace brink::cli

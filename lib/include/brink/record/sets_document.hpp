@@ -1,0 +1,30 @@
+// Sets as a record, and readings with the set of each.
+#pragma once
+
+#include "brink/record/document.hpp"
+#include "brink/sets/sets.hpp"
+
+namespace brink {
+
+// What find_sets() was asked for: {count, seed, ...}; what was not given is null.
+Object sets_inputs(const FindSetsOptions& options);
+
+// "round" for a Fisher component, "elliptical" for an angular central Gaussian one.
+std::string_view name_of(Shape shape);
+
+// One set: {name, count, weight, effective_number, mean{dip_deg, dip_direction_deg},
+// resultant_length, fisher_k, unbiased_k, k_interval{low, high}, confidence_cone_deg,
+// variability_cone_deg, containment[] {share, half_angle_deg}, eigenvalues[3],
+// principal_planes[3] {dip_deg, dip_direction_deg}, woodcock_shape, woodcock_strength,
+// fisher_fit{test, statistic, p_value}, shape}.
+Value set_value(const SetStatistics& set);
+
+// {sets[], unassigned, assignment[], log_likelihood, bic, counts_tried[] {count, bic}, undecided,
+// runner_up{count, bic}, uniformity{test, statistic, p_value}}.
+Value sets_result(const SetsResult& result);
+
+// The readings with one more column, the name of each one's set ("" for none), under the first of
+// these headings that is free: "set", "found_set", "found_set_2" ...
+Readings with_set_column(const Readings& readings, const SetsResult& result);
+
+}  // namespace brink

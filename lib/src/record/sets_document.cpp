@@ -1,0 +1,119 @@
+#include "brink/record/sets_document.hpp"
+
+#include <string>
+#include <utility>
+
+namespace brink {
+
+namespace {
+
+Value angle_value(const std::optional<Angle>& angle) {
+  return angle ? Value(angle->deg()) : Value();
+}
+
+Value word_value(const std::optional<double>& number) {
+  return number ? number_or_word(*number) : Value();
+}
+
+Value interval_value(const std::optional<KappaInterval>& interval) {
+  if (!interval) return nullptr;
+  return Object{{"low", interval->low}, {"high", interval->high}};
+}
+
+Value fit_value(const std::optional<FisherFit>& fit) {
+  if (!fit) return nullptr;
+  return Object{{"test", fit->test}, {"statistic", fit->statistic}, {"p_value", fit->p_value}};
+}
+
+Value count_value(const CountTried& tried) {
+  return Object{{"count", std::uint64_t{tried.count}}, {"bic", tried.bic}};
+}
+
+Value uniformity_value(const std::optional<TestResult>& test) {
+  if (!test) return nullptr;
+  return Object{{"test", "Bingham"}, {"statistic", test->statistic}, {"p_value", test->p_value}};
+}
+
+Array containment_value(const SetStatistics& set) {
+  Array cones;
+  for (const ContainmentCone& cone : set.containment) {
+    cones.push_back(Object{{"share", cone.share}, {"half_angle_deg", cone.half_angle.deg()}});
+  }
+  return cones;
+}
+
+}  // namespace
+
+std::string_view name_of(Shape shape) {
+  return shape == Shape::fisher ? "round" : "elliptical";
+}
+
+Object sets_inputs(const FindSetsOptions& options) {
+  Array shares;
+  for (const double share : options.containment_shares) shares.push_back(share);
+  return Object{{"count", options.count ? Value(std::uint64_t{*options.count}) : Value()},
+                {"containment_shares", std::move(shares)},
+                {"seed", options.seed}};
+}
+
+Value set_value(const SetStatistics& set) {
+  Array eigenvalues;
+  Array planes;
+  for (std::size_t k = 0; k < 3; ++k) {
+    eigenvalues.push_back(set.eigenvalues[k]);
+    planes.push_back(plane_value(set.principal_planes[k]));
+  }
+  return Object{{"name", set.name},
+                {"count", std::uint64_t{set.count}},
+                {"weight", set.weight},
+                {"effective_number", set.effective_number},
+                {"mean", plane_value(set.mean)},
+                {"resultant_length", set.resultant_length},
+                {"fisher_k", word_value(set.fisher_k)},
+                {"unbiased_k", word_value(set.unbiased_k)},
+                {"k_interval", interval_value(set.k_interval)},
+                {"confidence_cone_deg", angle_value(set.confidence_cone)},
+                {"variability_cone_deg", angle_value(set.variability_cone)},
+                {"containment", containment_value(set)},
+                {"eigenvalues", std::move(eigenvalues)},
+                {"principal_planes", std::move(planes)},
+                {"woodcock_shape", word_value(set.woodcock_shape)},
+                {"woodcock_strength", word_value(set.woodcock_strength)},
+                {"fisher_fit", fit_value(set.fisher_fit)},
+                {"shape", set.shape ? Value(name_of(*set.shape)) : Value()}};
+}
+
+Value sets_result(const SetsResult& result) {
+  Array sets;
+  for (const SetStatistics& set : result.sets) sets.push_back(set_value(set));
+  Array assignment;
+  for (const int set : result.assignment) assignment.push_back(set);
+  Array tried;
+  for (const CountTried& one : result.tried) tried.push_back(count_value(one));
+  return Object{{"sets", std::move(sets)},
+                {"unassigned", std::uint64_t{result.unassigned}},
+                {"assignment", std::move(assignment)},
+                {"log_likelihood", result.log_likelihood},
+                {"bic", result.bic},
+                {"counts_tried", std::move(tried)},
+                {"undecided", result.undecided},
+                {"runner_up", result.runner_up ? count_value(*result.runner_up) : Value()},
+                {"uniformity", uniformity_value(result.uniformity)}};
+}
+
+Readings with_set_column(const Readings& readings, const SetsResult& result) {
+  std::string heading = "set";
+  for (int n = 1; readings.find_column(heading) != nullptr; ++n) {
+    heading = n == 1 ? "found_set" : "found_set_" + std::to_string(n);
+  }
+  Readings marked = readings;
+  ExtraColumn column{std::move(heading), {}};
+  for (const int set : result.assignment) {
+    column.cells.push_back(set == 0 ? std::string_view()
+                                    : result.sets[static_cast<std::size_t>(set) - 1].name);
+  }
+  marked.extra.push_back(std::move(column));
+  return marked;
+}
+
+}  // namespace brink
