@@ -41,7 +41,7 @@ refuse "the library draws nothing, prints nothing and reads no options" \
 refuse "the drawings know nothing of the program" '#include [<"](iostream|CLI/|command)' plot
 refuse "public headers show Eigen and the standard library only" \
   '#include [<"](fmt|nlohmann|toml|boost|nettle|cairo|pango)' lib/include plot/include
-refuse "the only tolerance for ties is in base/ties.hpp" '\b1e-0?9\b' \
+refuse "the only tolerance for ties is in base/ties.hpp" '^([^/]|/[^/])*[^0-9.]1e-0?9[^0-9]' \
   $(find lib/include lib/src -name '*.?pp' ! -name ties.hpp)
 
 # A library that compiles slowly is known to few files.
