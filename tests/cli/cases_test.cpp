@@ -126,11 +126,15 @@ void compare(const toml::table& table, const std::string& key, const std::string
              bool may_be_anything) {
   const auto whole = table[key].value<std::string>();
   const std::vector<std::string> parts = texts(table, key + "_has");
-  if (whole) EXPECT_EQ(actual, *whole) << key;
+  if (whole) {
+    EXPECT_EQ(actual, *whole) << key;
+  }
   for (const std::string& part : parts) {
     EXPECT_NE(actual.find(part), std::string::npos) << key << " lacks: " << part << "\n" << actual;
   }
-  if (!whole && parts.empty() && !may_be_anything) EXPECT_EQ(actual, "") << key;
+  if (!whole && parts.empty() && !may_be_anything) {
+    EXPECT_EQ(actual, "") << key;
+  }
 }
 
 class CommandLineCase : public ::testing::TestWithParam<Case> {};
@@ -161,7 +165,7 @@ TEST_P(CommandLineCase, EndsAsWritten) {
 }
 
 INSTANTIATE_TEST_SUITE_P(All, CommandLineCase, ::testing::ValuesIn(read_cases()),
-                         [](const auto& info) { return info.param.name; });
+                         [](const auto& one) { return one.param.name; });
 
 }  // namespace
 }  // namespace brink
