@@ -93,15 +93,17 @@ std::string summary(const Readings& readings, const ReadingOptions& options) {
 int run_readings(const std::vector<std::string>& files, const ReadingsRun& run, Streams& streams) {
   check_output(run);
   // The rejected lines stand in the result; standard error gets their number.
-  Readings readings = load_readings(files, run.input, run.output, streams, 0);
+  const std::optional<Site> site = load_site(files, run.input);
+  Readings readings = load_readings(files, run.input, run.output, streams, 0, site);
   const std::vector<std::string> doubts = check_readings(readings);
   print_warnings(doubts, run.output, streams);
   readings.warnings.insert(readings.warnings.end(), doubts.begin(), doubts.end());
   if (!run.output.output.empty() && readings.size() > 0) {
-    write_output(run.output.output, readings_csv(readings, table_form(run)), streams.out, files);
+    write_output(run.output.output, readings_csv(readings, table_form(run)), streams.out,
+                 files_read(files, site));
   }
   if (run.output.json) {
-    Object inputs = input_record(readings, run.input);
+    Object inputs = input_record(readings, run.input, site);
     inputs.add("strict", run.input.strict);
     inputs.add("to", run.to ? Value(name_of(*run.to)) : Value());
     streams.out << to_json(result_document("readings", std::move(inputs), readings.warnings,

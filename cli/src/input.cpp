@@ -14,6 +14,7 @@
 
 #include "brink/base/error.hpp"
 #include "brink/record/readings_document.hpp"
+#include "brink/record/site_document.hpp"
 
 namespace brink::cli {
 
@@ -198,6 +199,11 @@ void print_rejections(const Readings& readings, std::size_t most, Streams& strea
 }  // namespace
 
 void add_input_options(std::vector<Option>& options, InputOptions& target) {
+  options.push_back(
+      text_option("--site", "SITE.toml",
+                  "In place of FILEs: the site file that names them and says how each "
+                  "is written.",
+                  target.site_file, kGroup));
   options.push_back(notation_option(target.reading));
   options.push_back(strike_rule_option(target.reading));
   options.push_back(declination_option(target.reading));
@@ -243,8 +249,36 @@ std::string read_bytes(const std::string& name, Streams& streams) {
   return read_open_file(file.get(), name, failure ? 0 : static_cast<std::size_t>(size));
 }
 
-Readings load_readings(const std::vector<std::string>& files, const InputOptions& options,
-                       const OutputOptions& output, Streams& streams, std::size_t most_rejections) {
+std::optional<Site> load_site(const std::vector<std::string>& files, const InputOptions& options) {
+  if (options.site_file.empty()) return {};
+  if (!files.empty()) {
+    throw option_error("FILE", files.front(), "stands beside --site, which names the files",
+                       "files or --site");
+  }
+  const ReadingOptions& reading = options.reading;
+  const bool says_how = reading.notation || reading.strike_rule || reading.hole ||
+                        reading.overturned || reading.declination != Angle() ||
+                        !options.bias.traverses.empty();
+  if (says_how) {
+    throw option_error("--site", options.site_file,
+                       "stands beside options that say how its files were written and taken",
+                       "[[readings]] and [[traverse]] in the site file");
+  }
+  return read_site(options.site_file);
+}
+
+std::vector<std::string> files_read(const std::vector<std::string>& files,
+                                    const std::optional<Site>& site) {
+  if (!site) return files;
+  std::vector<std::string> result{site->source.name};
+  for (const SiteReadings& readings : site->readings) result.push_back(readings.file);
+  return result;
+}
+
+namespace {
+
+Readings read_files(const std::vector<std::string>& files, const ReadingOptions& options,
+                    Streams& streams) {
   if (files.empty()) {
     throw option_error("FILE", {}, "is missing", "one or more files of readings, or -");
   }
@@ -255,42 +289,73 @@ Readings load_readings(const std::vector<std::string>& files, const InputOptions
   for (const std::string& name : files) contents.push_back(read_bytes(name, streams));
   std::vector<InputBytes> inputs;
   for (std::size_t i = 0; i < files.size(); ++i) inputs.push_back({files[i], contents[i]});
-  Readings readings = read_readings(inputs, options.reading);
+  return read_readings(inputs, options);
+}
+
+Readings read_site_files(const Site& site, const ReadingOptions& options, Streams& streams) {
+  std::vector<std::string> contents;
+  for (const SiteReadings& readings : site.readings) {
+    contents.push_back(read_bytes(readings.file, streams));
+  }
+  std::vector<ReadingSource> sources;
+  for (std::size_t i = 0; i < contents.size(); ++i) {
+    ReadingSource source{{site.readings[i].file, contents[i]}, site.readings[i].options};
+    auto& only = source.options.only;
+    only.insert(only.end(), options.only.begin(), options.only.end());
+    sources.push_back(std::move(source));
+  }
+  return read_readings(sources);
+}
+
+}  // namespace
+
+Readings load_readings(const std::vector<std::string>& files, const InputOptions& options,
+                       const OutputOptions& output, Streams& streams, std::size_t most_rejections,
+                       const std::optional<Site>& site) {
+  Readings readings = site ? read_site_files(*site, options.reading, streams)
+                           : read_files(files, options.reading, streams);
   check_set_column(readings, options);
-  weigh_readings(readings, options.bias);
+  BiasOptions bias = site ? site->bias : options.bias;
+  bias.unweighted = options.bias.unweighted;
+  weigh_readings(readings, bias);
   print_warnings(readings.warnings, output, streams);
   if (!output.quiet) print_rejections(readings, most_rejections, streams);
   return readings;
 }
 
-Object input_record(const Readings& readings, const InputOptions& options) {
+Object input_record(const Readings& readings, const InputOptions& options,
+                    const std::optional<Site>& site) {
   Object record = readings_inputs(readings, options.reading);
+  record.add("site", site ? site_value(*site) : Value());
+  const BiasOptions& bias = site ? site->bias : options.bias;
   Array traverses;
-  for (const Traverse& traverse : options.bias.traverses) {
+  for (const Traverse& traverse : bias.traverses) {
     traverses.push_back(traverse_value(traverse));
   }
   record.add("traverses", std::move(traverses));
-  record.add("traverse_column", options.bias.column);
-  record.add("blind_angle_deg", options.bias.blind_angle.deg());
+  record.add("traverse_column", bias.column);
+  record.add("blind_angle_deg", bias.blind_angle.deg());
   record.add("unweighted", options.bias.unweighted);
   return record;
 }
 
 void require_usable(const Readings& readings, const InputOptions& options) {
-  const std::string file = readings.files.empty() ? "" : readings.files.front().name;
-  if (readings.size() == 0) {
-    throw Error(ErrorKind::input, Place{.file = file},
-                fmt::format("not one usable reading ({} rows read, {} rejected, {} left out by "
-                            "--only)",
-                            readings.read, readings.rejected.size(), readings.filtered));
+  const bool none = readings.size() == 0;
+  if (!none && (!options.strict || readings.rejected.empty())) return;
+  const std::string counts =
+      fmt::format("{} rows read, {} rejected, {} left out by a filter", readings.read,
+                  readings.rejected.size(), readings.filtered);
+  if (readings.rejected.empty()) {
+    const std::string file = readings.files.empty() ? "" : readings.files.front().name;
+    throw Error(ErrorKind::input, Place{.file = file}, "not one usable reading: " + counts, {},
+                "a heading line and at least one reading");
   }
-  if (options.strict && !readings.rejected.empty()) {
-    const Rejection& first = readings.rejected.front();
-    throw Error(ErrorKind::input, {first.file, first.line, first.column, first.heading},
-                fmt::format("is the first of {} rejected line{}, and --strict allows none",
-                            readings.rejected.size(), readings.rejected.size() == 1 ? "" : "s"),
-                first.value);
-  }
+  const Rejection& first = readings.rejected.front();
+  throw Error(
+      ErrorKind::input, {first.file, first.line, first.column, first.heading},
+      fmt::format("{} ({}: {})", first.reason,
+                  none ? "not one usable reading" : "--strict allows no rejected line", counts),
+      first.value);
 }
 
 std::string rejection_text(const Rejection& rejection) {

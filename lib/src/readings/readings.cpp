@@ -66,8 +66,7 @@ struct ColumnFilter {
 
 class ReadingCollector {
  public:
-  ReadingCollector(const ReadingOptions& options, std::size_t expected)
-      : options_(options), normal_of_(expected) {
+  explicit ReadingCollector(std::size_t expected) : normal_of_(expected) {
     expected = std::min(expected, std::size_t{1} << 26);
     readings_.planes.reserve(expected);
     readings_.normals.reserve(expected);
@@ -75,7 +74,7 @@ class ReadingCollector {
     readings_.weights.reserve(expected);
   }
 
-  void read_file(const InputBytes& file);
+  void read_file(const InputBytes& file, const ReadingOptions& options);
   Readings finish();
 
  private:
@@ -104,11 +103,11 @@ class ReadingCollector {
     while (cells.size() < readings_.size()) cells.push_back({});
   }
 
-  const ReadingOptions& options_;
   NormalMaker normal_of_;
   Readings readings_;
   std::vector<std::string> extra_keys_;  // of readings_.extra
   // Of the present file:
+  const ReadingOptions* options_ = nullptr;
   std::vector<ColumnFilter> filters_;
   std::vector<std::size_t> extra_of_column_;  // index into readings_.extra, by columns.extra
   std::size_t doubts_ = 0;
@@ -118,7 +117,7 @@ class ReadingCollector {
 
 void ReadingCollector::find_filters(const std::string& name, const Row& headings) {
   filters_.clear();
-  for (const Filter& filter : options_.only) {
+  for (const Filter& filter : options_->only) {
     const std::string key = heading_key(filter.heading);
     const auto at = std::find_if(headings.cells.begin(), headings.cells.end(),
                                  [&](auto heading) { return heading_key(heading) == key; });
@@ -166,17 +165,18 @@ std::unique_ptr<RowSource> open_rows(std::string_view text, const std::string& n
   return std::make_unique<CsvReader>(text, name);
 }
 
-void ReadingCollector::read_file(const InputBytes& file) {
+void ReadingCollector::read_file(const InputBytes& file, const ReadingOptions& options) {
+  options_ = &options;
   readings_.files.push_back({file.name, sha256_hex(file.bytes)});
   const Text text(file.bytes, file.name);
   const std::unique_ptr<RowSource> source = open_rows(text.view(), file.name);
   RowSource& rows = *source;
   const Row& headings = rows.headings();
-  const Columns columns = understand_columns(headings, file.name, options_.notation);
-  check_strike_rule(columns, options_, file.name, headings);
+  const Columns columns = understand_columns(headings, file.name, options_->notation);
+  check_strike_rule(columns, options, file.name, headings);
   find_filters(file.name, headings);
   find_extra(columns, headings);
-  const PlaneReader planes(columns, options_,
+  const PlaneReader planes(columns, options,
                            rows.comma_separates() ? DecimalComma::no : DecimalComma::yes);
   doubts_ = 0;
   undecided_.reset();
@@ -326,7 +326,7 @@ void ReadingCollector::doubt(const Source& source, const Row& row, const std::st
 
 // In a text column without a stated notation the whole column must show which number comes first.
 void ReadingCollector::watch_bare_pair(const Source& source, const Row& row) {
-  if (options_.notation || options_.strike_rule) return;
+  if (options_->notation || options_->strike_rule) return;
   const std::size_t column = *source.columns.of(Meaning::orientation);
   const std::string_view cell = row.cell(column);
   switch (bare_pair(cell, source.planes.text_rules().comma)) {
@@ -381,15 +381,29 @@ const ExtraColumn* Readings::find_column(std::string_view heading) const {
   return at == extra.end() ? nullptr : &*at;
 }
 
+namespace {
+
+// Lines that may hold a reading: no usable row is shorter than "5,5".
+std::size_t most_rows(const InputBytes& file) {
+  const auto count = std::count(file.bytes.begin(), file.bytes.end(), '\n');
+  return std::min(static_cast<std::size_t>(count), file.bytes.size() / 4) + 1;
+}
+
+}  // namespace
+
 Readings read_readings(std::span<const InputBytes> files, const ReadingOptions& options) {
-  std::size_t lines = 0;
-  for (const InputBytes& file : files) {
-    const auto count = std::count(file.bytes.begin(), file.bytes.end(), '\n');
-    // No usable row is shorter than "5,5".
-    lines += std::min(static_cast<std::size_t>(count), file.bytes.size() / 4) + 1;
-  }
-  ReadingCollector collector(options, lines);
-  for (const InputBytes& file : files) collector.read_file(file);
+  std::size_t rows = 0;
+  for (const InputBytes& file : files) rows += most_rows(file);
+  ReadingCollector collector(rows);
+  for (const InputBytes& file : files) collector.read_file(file, options);
+  return collector.finish();
+}
+
+Readings read_readings(std::span<const ReadingSource> sources) {
+  std::size_t rows = 0;
+  for (const ReadingSource& source : sources) rows += most_rows(source.file);
+  ReadingCollector collector(rows);
+  for (const ReadingSource& source : sources) collector.read_file(source.file, source.options);
   return collector.finish();
 }
 

@@ -206,9 +206,4 @@ Job run_job(Site site, Readings readings, const JobOptions& options) {
   return job;
 }
 
-std::optional<bool> meets_target(const Site& site, double factor_of_safety) {
-  if (!site.target_factor_of_safety) return {};
-  return factor_of_safety >= *site.target_factor_of_safety;
-}
-
 }  // namespace brink

@@ -27,13 +27,18 @@ Plane plane_of(Angle dip, Angle direction) {
   return {dip, dip == Angle() ? Angle() : wrap_360(direction)};
 }
 
+Plane required_plane(const SiteTable& table, const std::string& dip_key,
+                     const std::string& direction_key) {
+  const double dip = table.required_number(dip_key, kDip);
+  const double direction = table.required_number(direction_key, kAzimuth);
+  return plane_of(Angle::degrees(dip), Angle::degrees(direction));
+}
+
 // A dip and a dip direction that come together or not at all.
 std::optional<Plane> optional_plane(const SiteTable& table, const std::string& dip_key,
                                     const std::string& direction_key) {
   if (!table.has(dip_key) && !table.has(direction_key)) return {};
-  const double dip = table.required_number(dip_key, kDip);
-  const double direction = table.required_number(direction_key, kAzimuth);
-  return plane_of(Angle::degrees(dip), Angle::degrees(direction));
+  return required_plane(table, dip_key, direction_key);
 }
 
 std::optional<MohrCoulomb> optional_strength(const SiteTable& table) {
@@ -96,6 +101,39 @@ std::vector<SiteReadings> readings_of(const SiteTable& root, const std::string& 
   }
   if (result.empty()) throw root.missing("readings", "[[readings]] with a file");
   return result;
+}
+
+Traverse traverse_of(const SiteTable& table) {
+  Traverse traverse;
+  traverse.name = table.text("name").value_or("");
+  const std::string kind = table.required_text("kind");
+  if (kind == name_of(TraverseKind::window)) {
+    traverse.kind = TraverseKind::window;
+    traverse.window = required_plane(table, "dip_deg", "dip_direction_deg");
+    return traverse;
+  }
+  const bool borehole = kind == name_of(TraverseKind::borehole);
+  if (!borehole && kind != name_of(TraverseKind::scanline)) {
+    throw table.wrong("kind", "is not a kind of traverse", "scanline, borehole, window");
+  }
+  traverse.kind = borehole ? TraverseKind::borehole : TraverseKind::scanline;
+  traverse.line.plunge =
+      Angle::degrees(table.required_number("plunge_deg", from_to(-90.0, 90.0, "degrees")));
+  traverse.line.trend = wrap_360(Angle::degrees(table.required_number("trend_deg", kAzimuth)));
+  return traverse;
+}
+
+BiasOptions bias_of(const SiteTable& root) {
+  BiasOptions bias;
+  for (const SiteTable& table : root.tables("traverse", {"name", "kind", "trend_deg", "plunge_deg",
+                                                         "dip_deg", "dip_direction_deg"})) {
+    bias.traverses.push_back(traverse_of(table));
+  }
+  const SiteTable table = root.table("bias", {"traverse_column", "blind_angle_deg"});
+  bias.column = table.text("traverse_column").value_or(bias.column);
+  bias.blind_angle = table.angle("blind_angle_deg", {0.0, 90.0, true, false, "degrees"})
+                         .value_or(bias.blind_angle);
+  return bias;
 }
 
 SiteSet set_of(const SiteTable& table, bool named_by_column) {
@@ -199,12 +237,13 @@ std::string bytes_of(const std::string& file) {
 Site parse_site(std::string_view text, const std::string& file) {
   const TomlTable tree = parse_toml(text, file);
   const SiteTable root(tree, file, "", 0,
-                       {"title", "readings", "sets", "set", "face", "strength", "rock", "water",
-                        "seismic", "kinematics", "target"});
+                       {"title", "readings", "traverse", "bias", "sets", "set", "face", "strength",
+                        "rock", "water", "seismic", "kinematics", "target"});
   Site site;
   site.source = {file, sha256_hex(text)};
   site.title = root.text("title").value_or(std::filesystem::path(file).stem().string());
   site.readings = readings_of(root, file);
+  site.bias = bias_of(root);
   site.sets = sets_of(root);
   site.faces = faces_of(root);
   site.strength = optional_strength(root.table("strength", {"friction_deg", "cohesion_kPa"}));
@@ -226,6 +265,11 @@ std::optional<Angle> kinematic_friction(const Site& site) {
   if (site.kinematics.friction) return site.kinematics.friction;
   if (site.strength) return site.strength->friction;
   return {};
+}
+
+std::optional<bool> meets_target(const Site& site, double factor_of_safety) {
+  if (!site.target_factor_of_safety) return {};
+  return factor_of_safety >= *site.target_factor_of_safety;
 }
 
 }  // namespace brink

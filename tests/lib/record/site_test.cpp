@@ -24,6 +24,19 @@ declination_deg = -3.5
 only = ["bench=2", "trace_length>=1"]
 [[readings]]
 file = "/data/b.csv"
+[[traverse]]
+name = "SL1"
+kind = "scanline"
+trend_deg = 118
+plunge_deg = -1
+[[traverse]]
+name = "W"
+kind = "window"
+dip_deg = 80
+dip_direction_deg = 215
+[bias]
+traverse_column = "line"
+blind_angle_deg = 10
 [sets]
 count = 3
 [[set]]
@@ -67,6 +80,11 @@ TEST(Site, ReadsEveryKey) {
   EXPECT_EQ(site.readings[0].options.declination, Angle::degrees(-3.5));
   EXPECT_EQ(site.readings[0].options.only.size(), 2U);
   EXPECT_EQ(site.readings[1].file, "/data/b.csv");
+  ASSERT_EQ(site.bias.traverses.size(), 2U);
+  EXPECT_EQ(site.bias.traverses[0].line, (Line{118_deg, -1_deg}));
+  EXPECT_EQ(site.bias.traverses[1].window, (Plane{80_deg, 215_deg}));
+  EXPECT_EQ(site.bias.column, "line");
+  EXPECT_EQ(site.bias.blind_angle, 10_deg);
   EXPECT_EQ(site.sets.count, 3U);
   ASSERT_EQ(site.sets.known.size(), 1U);
   EXPECT_EQ(site.sets.known[0].near, (Plane{24_deg, 0_deg}));
@@ -126,7 +144,8 @@ TEST(Site, RefusalsNameLineColumnKeyValueAndWhatIsAccepted) {
             "s.toml:3: face.upper_dip_direction_deg: is missing; accepted: 0 to 360 degrees");
   EXPECT_EQ(refusal("[wather]\nfill = 1\n"),
             "s.toml:6:2: 'wather' is not a key of the site file (did you mean 'water'?); accepted: "
-            "title, readings, sets, set, face, strength, rock, water, seismic, kinematics, target");
+            "title, readings, traverse, bias, sets, set, face, strength, rock, water, seismic, "
+            "kinematics, target");
   EXPECT_EQ(refusal("[water]\nfill = 1.5\n"),
             "s.toml:7:8: water.fill: '1.5' is out of range; accepted: 0 to 1");
   EXPECT_EQ(refusal("[sets]\ncount = 2.5\n"),
@@ -134,6 +153,9 @@ TEST(Site, RefusalsNameLineColumnKeyValueAndWhatIsAccepted) {
             "99");
   EXPECT_EQ(refusal("[[set]]\nname = \"J1\"\n"),
             "s.toml:6: set.dip_deg: is missing; accepted: 0 to 90 degrees");
+  EXPECT_EQ(refusal("[[traverse]]\nkind = \"line\"\n"),
+            "s.toml:7:8: traverse.kind: 'line' is not a kind of traverse; accepted: scanline, "
+            "borehole, window");
   EXPECT_EQ(refusal("[strength]\ncohesion_kPa = 4\n"),
             "s.toml:6: strength.friction_deg: is missing; accepted: 0 or above and below 90 "
             "degrees");

@@ -117,4 +117,11 @@ struct ReadingOptions {
 // Cost: linear; about 50 ns and 100 bytes a reading beside the text.
 Readings read_readings(std::span<const InputBytes> files, const ReadingOptions& options);
 
+// The same where each file is written in its own way.
+struct ReadingSource {
+  InputBytes file;
+  ReadingOptions options;
+};
+Readings read_readings(std::span<const ReadingSource> sources);
+
 }  // namespace brink

@@ -65,7 +65,4 @@ struct Job {
 // friction angle, or names a column of sets that the readings lack.
 Job run_job(Site site, Readings readings, const JobOptions& options);
 
-// Whether a factor of safety reaches the site's target; nothing where there is none.
-std::optional<bool> meets_target(const Site& site, double factor_of_safety);
-
 }  // namespace brink

@@ -13,6 +13,7 @@
 #include "brink/mechanics/loads.hpp"
 #include "brink/mechanics/strength.hpp"
 #include "brink/orientation/face.hpp"
+#include "brink/readings/bias.hpp"
 #include "brink/readings/readings.hpp"
 
 namespace brink {
@@ -67,6 +68,7 @@ struct Site {
   InputFile source;  // the site file itself
   std::string title;
   std::vector<SiteReadings> readings;  // one or more
+  BiasOptions bias;                    // [[traverse]] and [bias]
   SiteSets sets;
   std::vector<SiteFace> faces;              // one or more
   std::optional<MohrCoulomb> strength;      // [strength], of every set that has none of its own
@@ -86,5 +88,8 @@ Site read_site(const std::string& file);
 
 // The friction angle of the kinematic tests: [kinematics], else [strength], else nothing.
 std::optional<Angle> kinematic_friction(const Site& site);
+
+// Whether a factor of safety reaches the site's target; nothing where there is none.
+std::optional<bool> meets_target(const Site& site, double factor_of_safety);
 
 }  // namespace brink
