@@ -139,8 +139,11 @@ WedgeFollowUp follow_wedge(const Job& job, const SiteFace& face,
   const Plane& a = job.sets.sets[pair.first].mean;
   const Plane& b = job.sets.sets[pair.second].mean;
   WedgeCase wedge;
-  wedge.geometry = {
-      a, b, face.face, face.upper, {WedgeMeasure::height, face.height_m.value()}, std::nullopt};
+  wedge.geometry.plane1 = a;
+  wedge.geometry.plane2 = b;
+  wedge.geometry.face = face.face;
+  wedge.geometry.upper = face.upper;
+  wedge.geometry.size = {WedgeMeasure::height, face.height_m.value()};
   wedge.unit_weight_kN_m3 = job.site.unit_weight_kN_m3.value();
   wedge.strength1 = strengths[pair.first].value();
   wedge.strength2 = strengths[pair.second].value();
