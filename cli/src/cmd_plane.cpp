@@ -3,8 +3,10 @@
 
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
+#include "brink/plot/section.hpp"
 #include "brink/record/plane_document.hpp"
 #include "commands.hpp"
+#include "drawing_file.hpp"
 #include "exit_status.hpp"
 #include "mechanics_options.hpp"
 #include "slide_text.hpp"
@@ -16,6 +18,7 @@ namespace {
 struct PlaneOptions {
   PlaneSlideInput slide;
   StrengthOptions strength;
+  std::string title;
   OutputOptions output;
 };
 
@@ -121,6 +124,8 @@ int run(const PlaneOptions& o, Streams& streams) {
   PlaneSlide slide = analyse_plane_slide(input);
   for (std::string& warning : strength_warnings(o.strength))
     slide.warnings.push_back(std::move(warning));
+  if (!o.output.output.empty())
+    write_drawing(o.output.output, plot::plane_sheet(input, slide, o.title));
   print_warnings(slide.warnings, o.output, streams);
   if (o.output.json)
     streams.out << to_json(result_document("plane", plane_slide_inputs(input), slide.warnings,
@@ -150,6 +155,7 @@ Command plane_command() {
   add_strength_options(command.options, state->strength, "Rock and joint");
   add_water_options(command.options, state->slide);
   add_force_options(command.options, state->slide);
+  add_drawing_options(command.options, state->title, state->output);
   add_output_options(command.options, state->output);
   command.examples = {
       {"brink plane --plane 35/150 --face 60/150 --height 12 --unit-weight 26 --friction 37 "

@@ -9,8 +9,10 @@
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
 #include "brink/mechanics/topple_table.hpp"
+#include "brink/plot/section.hpp"
 #include "brink/record/topple_document.hpp"
 #include "commands.hpp"
+#include "drawing_file.hpp"
 #include "exit_status.hpp"
 #include "input.hpp"
 #include "mechanics_options.hpp"
@@ -28,6 +30,7 @@ struct ToppleOptions {
   double width_m = 0.0;
   Angle base_dip;
   ToppleInput input;
+  std::string title;
   OutputOptions output;
 };
 
@@ -262,6 +265,8 @@ int run(const ToppleOptions& o, Streams& streams) {
   const ToppleResult result = analyse_toppling(problem.input);
   std::vector<std::string> warnings = problem.warnings;
   append(warnings, result.warnings);
+  if (!o.output.output.empty())
+    write_drawing(o.output.output, plot::topple_sheet(problem.input, result, o.title));
   print_warnings(warnings, o.output, streams);
   if (o.output.json) {
     Object inputs{{"blocks_file", problem.file}};
@@ -291,6 +296,7 @@ Command topple_command() {
   add_geometry_options(command.options, *state);
   add_table_options(command.options, *state);
   add_load_options(command.options, *state);
+  add_drawing_options(command.options, state->title, state->output);
   add_output_options(command.options, state->output);
   command.examples = {
       {"brink topple --face-dip 57 --height 90 --upper-dip 4 --base-dip 30 --width 10 --step 1 "

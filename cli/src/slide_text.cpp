@@ -84,6 +84,12 @@ std::string balance_text(const PlaneSlide& s) {
   return text + fmt::format("Factor of safety: {}\n", safety_text(s.factor_of_safety));
 }
 
+std::string behind_text(const PlaneSlide& s) {
+  if (!s.least_behind_crest) return {};
+  return fmt::format("  with the crack behind the crest: {} at the least\n",
+                     safety_text(*s.least_behind_crest));
+}
+
 std::string bolt_text(const PlaneSlideInput& in, const PlaneSlide& s) {
   if (!in.target) return {};
   const std::string target = shortest(*in.target);
@@ -147,7 +153,7 @@ std::string plane_slide_text(const PlaneSlideInput& input, const PlaneSlide& sli
   if (!slide.forms)
     return plane_heading(input) + paragraph("No block forms: " + slide.reason + ".");
   return plane_heading(input) + block_text(input, slide) + balance_text(slide) +
-         bolt_text(input, slide) + closing();
+         behind_text(slide) + bolt_text(input, slide) + closing();
 }
 
 std::string topple_text(const ToppleInput& input, const ToppleResult& result) {

@@ -135,6 +135,8 @@ CrackSearch search_critical_crack(const PlaneSlideInput& input, const SectionSha
   out.x_m = best.x_m;
   const double highest = std::max(behind.highest(), front.highest());
   out.flat = at_most(highest / best.factor_of_safety, 1.0);
+  if (best.x_m < range.crest_m)
+    out.least_behind_crest = std::min(crest.factor_of_safety, behind.best().factor_of_safety);
   const double reach_m = kTie * shape.height_m;
   out.at_edge = best.x_m <= range.front_m + reach_m || best.x_m >= range.back_m - reach_m;
   return out;

@@ -38,8 +38,9 @@ SlideBalance slide_balance(const Strength& strength, const SlideForces& forces,
 // The position (x of the section) of the crack that gives the least factor of safety.
 struct CrackSearch {
   double x_m = 0.0;
-  bool flat = false;     // the same factor of safety everywhere
-  bool at_edge = false;  // still falling at the end of the positions possible
+  bool flat = false;                         // the same factor of safety everywhere
+  bool at_edge = false;                      // still falling at the end of the positions possible
+  std::optional<double> least_behind_crest;  // where x_m lies in front of it
 };
 CrackSearch search_critical_crack(const PlaneSlideInput& input, const SectionShape& shape);
 

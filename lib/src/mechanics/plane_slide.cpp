@@ -76,6 +76,7 @@ Crack critical_crack(const PlaneSlideInput& in, const SectionShape& shape, Plane
     return {true, shape.crest.x() + best.setback_share * in.height_m};
   }
   const CrackSearch found = search_critical_crack(in, shape);
+  out.least_behind_crest = found.least_behind_crest;
   if (found.flat)
     out.warnings.emplace_back("the factor of safety is the same wherever the crack lies");
   else if (found.at_edge)

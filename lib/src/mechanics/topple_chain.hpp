@@ -19,6 +19,13 @@ struct BlockLoading {
   double lower_arm_m = 0.0;  // L: height at which the block in front holds
 };
 
+// M and L of the block with this number, Goodman & Bray 1976.
+struct ContactArms {
+  double upper_m = 0.0;
+  double lower_m = 0.0;
+};
+ContactArms contact_arms(const ToppleColumns& columns, std::size_t number);
+
 // Water, loads, bolts, shaking and weight of every block, in the order of their numbers.
 std::vector<BlockLoading> block_loading(const ToppleInput& input);
 

@@ -181,6 +181,25 @@ ToppleColumns topple_columns(const ToppleGeometry& g) {
   return out;
 }
 
+std::vector<std::array<SectionPoint, 4>> topple_outlines(const ToppleColumns& columns) {
+  const SinCos p = sincos(columns.base_dip);
+  const auto at = [&](double along_m, double above_m) {
+    return SectionPoint{along_m * p.cos - above_m * p.sin, along_m * p.sin + above_m * p.cos};
+  };
+  std::vector<std::array<SectionPoint, 4>> outlines;
+  double base_m = 0.0;
+  for (std::size_t n = 1; n <= columns.heights_m.size(); ++n) {
+    const ContactArms arms = contact_arms(columns, n);
+    if (n > 1) base_m += contact_arms(columns, n - 1).upper_m - arms.lower_m;
+    const double front_m = static_cast<double>(n - 1) * columns.width_m;
+    const double back_m = front_m + columns.width_m;
+    const double top_m = base_m + columns.heights_m[n - 1];
+    outlines.push_back(
+        {at(front_m, base_m), at(back_m, base_m), at(back_m, top_m), at(front_m, top_m)});
+  }
+  return outlines;
+}
+
 ToppleResult analyse_toppling(const ToppleInput& input) {
   check_input(input);
   const std::vector<BlockLoading> loading = block_loading(input);

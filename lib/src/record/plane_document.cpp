@@ -55,6 +55,8 @@ Object block_object(const PlaneSlide& s) {
       {"sliding_length_m", s.sliding_length_m},
       {"crack_depth_m", s.crack_depth_m},
       {"crack_setback_m", s.crack_setback_m},
+      {"least_behind_crest",
+       s.least_behind_crest ? number_or_word(*s.least_behind_crest) : Value()},
       {"bolt_for_target_kN_m", s.bolt_for_target ? Value(s.bolt_for_target->force_kN_m) : Value()},
       {"bolt_for_target", bolt_direction(s.bolt_for_target)},
       {"normal_kN_m", s.normal_kN_m},

@@ -45,6 +45,26 @@ TEST(Toppling, BlocksFromGeometry) {
   EXPECT_NEAR(columns.heights_m[10], 34.2, 0.1);
 }
 
+// Drawn from the heights and steps, the blocks give back the face: front tops below the crest lie
+// a1 apart, bases one step apart.
+TEST(Toppling, OutlinesFollowTheSteps) {
+  const ToppleColumns columns = topple_columns(example_geometry());
+  const auto outlines = topple_outlines(columns);
+  ASSERT_EQ(outlines.size(), 16U);
+  const SinCos p = sincos(columns.base_dip);
+  for (std::size_t n = 1; n < outlines.size(); ++n) {
+    const SectionPoint& base = outlines[n][0];
+    const SectionPoint& before = outlines[n - 1][1];
+    EXPECT_NEAR(-(base.x_m - before.x_m) * p.sin + (base.z_m - before.z_m) * p.cos, 1.0, 1e-9) << n;
+    EXPECT_NEAR((base.x_m - before.x_m) * p.cos + (base.z_m - before.z_m) * p.sin, 0.0, 1e-9) << n;
+  }
+  // The back top of every block below the crest lies on the face, one step down: it rises from the
+  // toe at the face's dip.
+  const SectionPoint& first = outlines[0][2];
+  const SectionPoint& tenth = outlines[9][2];
+  EXPECT_NEAR(atan2(tenth.z_m - first.z_m, tenth.x_m - first.x_m).deg(), 56.6, 1e-9);
+}
+
 TEST(Toppling, GeometryThatMakesNoBlocks) {
   ToppleGeometry g = example_geometry();
   g.base_dip = 60_deg;

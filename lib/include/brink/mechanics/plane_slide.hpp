@@ -15,6 +15,7 @@
 #include <vector>
 
 #include "brink/mechanics/loads.hpp"
+#include "brink/mechanics/section_point.hpp"
 #include "brink/mechanics/strength.hpp"
 #include "brink/orientation/face.hpp"
 
@@ -53,11 +54,6 @@ struct PlaneSlideInput {
   Angle strike_tolerance = Angle::degrees(20.0);  // beyond it a warning, no more
 };
 
-struct SectionPoint {
-  double x_m = 0.0;
-  double z_m = 0.0;
-};
-
 // Apparent dips, positive towards the side the plane dips to; the face's may pass 90.
 struct PlaneSection {
   Angle azimuth;  // the way the block slides
@@ -94,7 +90,9 @@ struct PlaneSlide {
   double sliding_length_m = 0.0;
   std::optional<double> crack_depth_m;    // absent without a crack; 0 where it misses the block
   std::optional<double> crack_setback_m;  // as given or as found
-  double normal_kN_m = 0.0;               // effective: water's uplift taken off
+  // With a critical crack found on the face: the least factor of safety of cracks behind the crest.
+  std::optional<double> least_behind_crest;
+  double normal_kN_m = 0.0;  // effective: water's uplift taken off
   double uplift_kN_m = 0.0;
   double crack_water_kN_m = 0.0;
   double driving_kN_m = 0.0;  // down the plane; below 0 where the forces push the block up it

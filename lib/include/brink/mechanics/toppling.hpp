@@ -9,12 +9,14 @@
 // Engineering, 4th ed., ch. 9, each by the equilibrium of the block.
 #pragma once
 
+#include <array>
 #include <cstddef>
 #include <optional>
 #include <string>
 #include <vector>
 
 #include "brink/base/angle.hpp"
+#include "brink/mechanics/section_point.hpp"
 
 namespace brink {
 
@@ -45,6 +47,11 @@ struct ToppleGeometry {
 // out of range, bases at least as steep as the face, and geometry that leaves no block or more than
 // 10,000.
 ToppleColumns topple_columns(const ToppleGeometry& geometry);
+
+// Corners of every block, by number, in the section: front of the base, back of the base, back of
+// the top, front of the top. The origin is the front of block 1's base; each base stands above the
+// one in front of it by what the heights, a1 and a2 leave.
+std::vector<std::array<SectionPoint, 4>> topple_outlines(const ToppleColumns& columns);
 
 // Depth of water in the joints behind a block (upper) and in front of it (lower), above the block's
 // own base.
@@ -80,6 +87,9 @@ struct ToppleInput {
   Angle balance_bolt_plunge;        // of the bolt on block 1 that would balance the slope
   std::optional<double> balance_bolt_height_m;
 };
+
+// The water at every wet block: as given, or as the fill of the joints makes it.
+std::vector<BlockWater> block_water(const ToppleInput& input);
 
 enum class BlockMode { stable, topples, slides };
 
