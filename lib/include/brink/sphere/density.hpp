@@ -10,12 +10,15 @@
 #include <array>
 #include <cstddef>
 #include <cstdint>
+#include <memory>
 #include <optional>
 #include <vector>
 
 #include "brink/orientation/orientation.hpp"
 
 namespace brink {
+
+struct DensitySum;
 
 // Concentration of the kernel for `number` axes: 2 (1 + number / s^2) with s = 3, for which the
 // expected value under a uniform scatter is three times its standard deviation. The rule is Kamb's
@@ -27,28 +30,42 @@ namespace brink {
 double kernel_concentration(double number);
 inline constexpr double kFinestKernel = 200.0;
 
+// How the axes are summed.
+enum class DensityMethod {
+  automatic,  // binned from 20,000 axes and concentration 40 up, else direct
+  direct,     // every distinct axis by itself
+  // Axes in cells of a fifth of the kernel's width, by their means and second moments; the
+  // error is below 1e-5 of the peak. The cost hardly grows with the number of axes.
+  binned,
+};
+
 // Axes with weights. For weighted readings the rule's `number` is the effective number
 // (sum w)^2 / sum w^2.
 class AxialDensity {
  public:
   // `axes` are unit vectors in either sense, `weights` one above 0 for each, or none for all equal.
-  // `concentration` above 0, at most 10,000; by the rule where absent. Equal axes are merged. At
-  // least one axis: ErrorKind::argument otherwise, and for a concentration out of range.
+  // `concentration` above 0, at most 10,000; by the rule where absent. At least one axis:
+  // ErrorKind::argument otherwise, and for a concentration out of range.
   AxialDensity(const std::vector<Vector3>& axes, const std::vector<double>& weights,
-               std::optional<double> concentration = {});
+               std::optional<double> concentration = {},
+               DensityMethod method = DensityMethod::automatic);
+  AxialDensity(AxialDensity&&) noexcept;
+  AxialDensity& operator=(AxialDensity&&) noexcept;
+  ~AxialDensity();
 
   double concentration() const { return concentration_; }
-  // Multiples of uniform at the unit vector `x`; the same at -x. Cost: one exponential a distinct
-  // axis.
+  // Multiples of uniform at the unit vector `x`. Error of the direct method: 3e-9 of the value and
+  // 1e-12 of the peak of a single axis, in which values at x and -x, or among other places, may
+  // differ.
   double at(const Vector3& x) const;
   // The same at many places, on up to `threads` threads (0: all cores); the same bits for any
-  // number.
+  // number. Cost: an exponential for each place and each axis, or cell, near it.
   std::vector<double> at(const std::vector<Vector3>& places, unsigned threads = 0) const;
   // The local maximum uphill of `x`.
   Vector3 peak_near(const Vector3& x) const;
 
  private:
-  std::vector<double> x_, y_, z_, weight_;  // weights sum to 1
+  std::unique_ptr<DensitySum> sum_;  // weights sum to 1
   double concentration_ = 0.0;
 };
 
