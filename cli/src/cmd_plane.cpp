@@ -5,10 +5,13 @@
 #include "brink/base/number.hpp"
 #include "brink/plot/section.hpp"
 #include "brink/record/plane_document.hpp"
+#include "brink/risk/plane_variation.hpp"
 #include "commands.hpp"
 #include "drawing_file.hpp"
 #include "exit_status.hpp"
 #include "mechanics_options.hpp"
+#include "output_file.hpp"
+#include "sensitivity_options.hpp"
 #include "slide_text.hpp"
 
 namespace brink::cli {
@@ -18,6 +21,7 @@ namespace {
 struct PlaneOptions {
   PlaneSlideInput slide;
   StrengthOptions strength;
+  SensitivityOptions sensitivity;
   std::string title;
   OutputOptions output;
 };
@@ -118,20 +122,92 @@ void add_force_options(std::vector<Option>& options, PlaneSlideInput& s) {
       above(0.0), s.target, group));
 }
 
-int run(const PlaneOptions& o, Streams& streams) {
-  PlaneSlideInput input = o.slide;
-  input.strength = strength_of(o.strength);
-  PlaneSlide slide = analyse_plane_slide(input);
+const PlaneVariable& variable_of(const char* option, const std::string& name) {
+  try {
+    return plane_variable(name);
+  } catch (const Error& error) {
+    throw Error(ErrorKind::argument, Place{.key = option}, "names no input that can vary", name,
+                error.accepted());
+  }
+}
+
+SensitivityCurve curve_of(const PlaneSlideInput& input, const VaryRequest& request) {
+  const PlaneVariable& variable = variable_of("--vary", request.name);
+  for (const double end : {request.range.from, request.range.to}) {
+    if (end >= variable.low && end <= variable.high) continue;
+    throw Error(ErrorKind::argument, Place{.key = "--vary " + request.name}, "is out of range",
+                shortest(end), from_to(variable.low, variable.high, variable.unit).text());
+  }
+  return sensitivity_curve(varied_plane(input, variable), request.range);
+}
+
+std::optional<BackAnalysis> back_analysis_of(const PlaneSlideInput& input, const PlaneOptions& o) {
+  if (!o.sensitivity.solve) return std::nullopt;
+  if (!input.target)
+    throw Error(ErrorKind::argument, Place{.key = "--solve"}, "is given without --target", {},
+                "--target FS with it");
+  const PlaneVariable& v = variable_of("--solve", *o.sensitivity.solve);
+  return BackAnalysis{v.name,
+                      v.unit,
+                      *input.target,
+                      v.solve_low,
+                      v.solve_high,
+                      find_crossings(varied_plane(input, v).safety, *input.target, v.solve_low,
+                                     v.solve_high, v.by_ratio)};
+}
+
+struct PlaneAnswer {
+  PlaneSlideInput input;
+  PlaneSlide slide;
+  std::vector<SensitivityCurve> curves;
+  std::optional<BackAnalysis> back_analysis;
+};
+
+PlaneAnswer answer(const PlaneOptions& o) {
+  PlaneAnswer a;
+  a.input = o.slide;
+  a.input.strength = strength_of(o.strength);
+  a.slide = analyse_plane_slide(a.input);
   for (std::string& warning : strength_warnings(o.strength))
-    slide.warnings.push_back(std::move(warning));
-  if (!o.output.output.empty())
-    write_drawing(o.output.output, plot::plane_sheet(input, slide, o.title));
-  print_warnings(slide.warnings, o.output, streams);
-  if (o.output.json)
-    streams.out << to_json(result_document("plane", plane_slide_inputs(input), slide.warnings,
-                                           plane_slide_value(slide)));
-  else
-    streams.out << plane_slide_text(input, slide);
+    a.slide.warnings.push_back(std::move(warning));
+  for (const VaryRequest& request : o.sensitivity.vary)
+    a.curves.push_back(curve_of(a.input, request));
+  a.back_analysis = back_analysis_of(a.input, o);
+  return a;
+}
+
+std::string json(const PlaneAnswer& a) {
+  Object result = plane_slide_value(a.slide);
+  result.add("sensitivity", sensitivity_value(a.curves));
+  result.add("solve", a.back_analysis ? back_analysis_value(*a.back_analysis) : Value());
+  return to_json(
+      result_document("plane", plane_slide_inputs(a.input), a.slide.warnings, std::move(result)));
+}
+
+std::string text(const PlaneAnswer& a) {
+  std::string more = sensitivity_text(a.curves);
+  if (a.back_analysis) more += back_analysis_text(*a.back_analysis);
+  return plane_slide_text(a.input, a.slide, more);
+}
+
+void write_files(const PlaneAnswer& a, const PlaneOptions& o) {
+  const std::string& path = o.output.output;
+  if (path.empty()) return;
+  if (known_ending("-o", path, {".svg", ".pdf", ".png", ".csv"}) == ".csv") {
+    if (a.curves.empty())
+      throw Error(ErrorKind::argument, Place{.key = "-o"}, "has no curves to write", path,
+                  "--vary with it, or a drawing: .svg, .pdf or .png");
+    write_file(path, sensitivity_csv(a.curves));
+  } else {
+    write_drawing(path, plot::plane_sheet(a.input, a.slide, o.title));
+  }
+}
+
+int run(const PlaneOptions& o, Streams& streams) {
+  const PlaneAnswer a = answer(o);
+  write_files(a, o);
+  print_warnings(a.slide.warnings, o.output, streams);
+  streams.out << (o.output.json ? json(a) : text(a));
   return kDone;
 }
 
@@ -155,7 +231,10 @@ Command plane_command() {
   add_strength_options(command.options, state->strength, "Rock and joint");
   add_water_options(command.options, state->slide);
   add_force_options(command.options, state->slide);
-  add_drawing_options(command.options, state->title, state->output);
+  add_sensitivity_options(command.options, state->sensitivity,
+                          "friction, cohesion, water-fill, water-depth, height, seismic, face-dip, "
+                          "plane-dip, crack-setback, bolt-force, surcharge");
+  add_drawing_options(command.options, state->title, state->output, true);
   add_output_options(command.options, state->output);
   command.examples = {
       {"brink plane --plane 35/150 --face 60/150 --height 12 --unit-weight 26 --friction 37 "
@@ -166,7 +245,11 @@ Command plane_command() {
        "The worst crack, shaking, and the bolts to hold it."},
       {"brink plane --plane 35/150 --face 60/150 --height 12 --unit-weight 26 "
        "--residual-friction 28 --jrc 8 --jcs 60000 --joint-length 15",
-       "Barton-Bandis strength, scaled to the length of the plane."}};
+       "Barton-Bandis strength, scaled to the length of the plane."},
+      {"brink plane --plane 35/150 --face 60/150 --height 12 --unit-weight 26 --friction 37 "
+       "--cohesion 10 --crack-setback 4 --water-depth 2 --vary friction=30..40:5 "
+       "--vary water-fill=0..1:5 --target 1.3 --solve height",
+       "What friction and water do, and the height that keeps a factor of safety of 1.3."}};
   command.run = [state](const std::vector<std::string>&, Streams& streams) {
     return run(*state, streams);
   };

@@ -12,12 +12,18 @@ const std::vector<std::string> kEndings{".svg", ".pdf", ".png"};
 
 }  // namespace
 
-void add_drawing_options(std::vector<Option>& options, std::string& title, OutputOptions& target) {
+void add_drawing_options(std::vector<Option>& options, std::string& title, OutputOptions& target,
+                         bool curves) {
   options.push_back(text_option("--title", "TEXT", "Heads the drawing.", title, "Output"));
-  Option output =
-      output_option("OUT.svg", "Draws the section to scale: .svg, .pdf or .png by ending.", target);
-  output.take = [&target](std::string_view text) {
-    known_ending("-o", std::string(text), kEndings);
+  std::vector<std::string> endings = kEndings;
+  std::string help = "Draws the section to scale: .svg, .pdf or .png by ending.";
+  if (curves) {
+    endings.emplace_back(".csv");
+    help += " As .csv: writes the curves of --vary as a table.";
+  }
+  Option output = output_option("OUT.svg", std::move(help), target);
+  output.take = [&target, endings](std::string_view text) {
+    known_ending("-o", std::string(text), endings);
     target.output = text;
   };
   options.push_back(std::move(output));

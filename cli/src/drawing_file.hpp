@@ -9,8 +9,9 @@
 
 namespace brink::cli {
 
-// --title TEXT and -o OUT.svg.
-void add_drawing_options(std::vector<Option>& options, std::string& title, OutputOptions& target);
+// --title TEXT and -o OUT.svg; `curves`: -o takes OUT.csv for the curves of --vary too.
+void add_drawing_options(std::vector<Option>& options, std::string& title, OutputOptions& target,
+                         bool curves = false);
 
 // Writes a .svg, .pdf or .png, whole or not at all. Throws ErrorKind::argument for another ending,
 // ErrorKind::file where it can't be written.

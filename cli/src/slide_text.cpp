@@ -149,11 +149,15 @@ std::string toe_text(const ToppleInput& in, const ToppleResult& r) {
 
 }  // namespace
 
-std::string plane_slide_text(const PlaneSlideInput& input, const PlaneSlide& slide) {
-  if (!slide.forms)
-    return plane_heading(input) + paragraph("No block forms: " + slide.reason + ".");
+std::string plane_slide_text(const PlaneSlideInput& input, const PlaneSlide& slide,
+                             const std::string& more) {
+  if (!slide.forms) {
+    const std::string none =
+        plane_heading(input) + paragraph("No block forms: " + slide.reason + ".");
+    return more.empty() ? none : none + more + closing();
+  }
   return plane_heading(input) + block_text(input, slide) + balance_text(slide) +
-         behind_text(slide) + bolt_text(input, slide) + closing();
+         behind_text(slide) + bolt_text(input, slide) + more + closing();
 }
 
 std::string topple_text(const ToppleInput& input, const ToppleResult& result) {

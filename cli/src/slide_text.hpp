@@ -8,7 +8,9 @@
 
 namespace brink::cli {
 
-std::string plane_slide_text(const PlaneSlideInput& input, const PlaneSlide& slide);
+// `more` stands before the cautions.
+std::string plane_slide_text(const PlaneSlideInput& input, const PlaneSlide& slide,
+                             const std::string& more = {});
 std::string topple_text(const ToppleInput& input, const ToppleResult& result);
 
 }  // namespace brink::cli

@@ -2,6 +2,7 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
 #include <cmath>
 
 #include "brink/base/error.hpp"
@@ -228,6 +229,19 @@ PlaneSlide analyse_plane_slide(const PlaneSlideInput& input) {
   balance(input, shape, block, crack.cuts, out);
   warn_of_upward(out);
   return out;
+}
+
+double greatest_water_depth_m(const PlaneSlideInput& input) {
+  PlaneSlideInput dry = input;
+  dry.water_depth_m = 0.0;
+  check_input(dry);
+  const SectionShape shape = section_shape(input.plane, input.face, input.upper, input.height_m);
+  if (!shape.reason.empty()) return 0.0;
+  if (input.crack == CrackChoice::none) return shape.exit.y();
+  const double x_m = input.crack == CrackChoice::critical ? std::max(shape.crest.x(), 0.0)
+                                                          : shape.crest.x() + input.crack_setback_m;
+  const bool in_the_air = x_m < shape.crest.x() && shape.face_dip >= 90_deg;
+  return in_the_air || x_m <= 0.0 ? 0.0 : std::max(crack_depth_m(shape, x_m), 0.0);
 }
 
 PlaneSlide dry_plane_slide(const Plane& plane, const Face& face, double height_m,

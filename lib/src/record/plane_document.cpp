@@ -94,7 +94,7 @@ Value plane_slide_inputs(const PlaneSlideInput& in) {
                 {"strike_tolerance_deg", in.strike_tolerance.deg()}};
 }
 
-Value plane_slide_value(const PlaneSlide& slide) {
+Object plane_slide_value(const PlaneSlide& slide) {
   Object object{{"forms", slide.forms},
                 {"reason", slide.forms ? Value() : Value(slide.reason)},
                 {"section", section_value(slide.section)}};

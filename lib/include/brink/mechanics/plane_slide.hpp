@@ -113,6 +113,11 @@ struct PlaneSlide {
 // every direction about the vertical changes nothing.
 PlaneSlide analyse_plane_slide(const PlaneSlideInput& input);
 
+// The deepest water that the input's block takes: the depth of its crack, for a critical one that
+// of a crack at the crest, without one the height at which the plane comes out. 0 where no block
+// forms or the crack misses it. The input's own water is not looked at.
+double greatest_water_depth_m(const PlaneSlideInput& input);
+
 // The dry block without crack or loads: the first thing to know of a flagged plane.
 PlaneSlide dry_plane_slide(const Plane& plane, const Face& face, double height_m,
                            double unit_weight_kN_m3, Angle friction, double cohesion_kPa);

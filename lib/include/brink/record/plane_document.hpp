@@ -11,7 +11,7 @@ Value plane_slide_inputs(const PlaneSlideInput& input);
 
 // Every key is always there; what does not exist (the weight of a block that does not form) is
 // null.
-Value plane_slide_value(const PlaneSlide& slide);
+Object plane_slide_value(const PlaneSlide& slide);
 
 std::string_view to_string(PlaneSlideMode mode);  // "slides", "lifts"
 
