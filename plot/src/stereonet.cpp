@@ -15,6 +15,21 @@ namespace brink::plot {
 
 namespace {
 
+// From so many readings up contour lines go over the poles, which would hide them, and strays
+// become dots: circles that small can't be told from dots and fill the file.
+constexpr std::size_t kCrowd = 3000;
+constexpr double kGrain_mm = 0.05;
+
+bool is_crowd(const Readings& readings) {
+  return readings.size() > kCrowd;
+}
+
+// Of readings in no set.
+style::SetStyle stray_style(const Readings& readings) {
+  return is_crowd(readings) ? style::SetStyle{style::kPale, Shape::disc}
+                            : style::SetStyle{style::kMuted, Shape::ring};
+}
+
 Colour tint(std::size_t level, std::size_t levels) {
   // Up to as many levels as tints take them in order; more share them evenly.
   const std::size_t tints = style::kTints.size();
@@ -39,11 +54,8 @@ Group draw_density(const NetContent& content, const NetFrame& frame) {
   return group;
 }
 
-// Lines go over the poles where those are so many that they would hide them.
-constexpr std::size_t kCrowd = 3000;
-
 Group draw_contours(const NetContent& content, const NetFrame& frame) {
-  const bool crowded = content.readings.size() > kCrowd;
+  const bool crowded = is_crowd(content.readings);
   Path lines{{},
              Stroke{crowded ? style::kInk : style::kTintEdge,
                     crowded ? style::kThin_mm : style::kHairline_mm,
@@ -93,15 +105,25 @@ Group draw_faces(const NetContent& content, const NetFrame& frame) {
 Group draw_poles(const NetContent& content, const NetFrame& frame) {
   Group group{"Poles", {}, {}};
   const double size = pole_size_mm(frame, content.readings.size());
+  const auto stray = stray_style(content.readings);
   const auto poles = [&](int set) {
     return pole_places(frame, content.readings, content.sets.assignment, set);
   };
-  add(group, Symbols{Shape::ring, size, 0.16 * size, style::kMuted, poles(0)});
+  add(group, Symbols{stray.shape, size, 0.16 * size, stray.colour, poles(0)});
   // The smallest set last, so that it isn't buried.
   for (std::size_t i = 0; i < content.sets.sets.size(); ++i) {
     const auto look = style::set_style(i + 1);
     add(group, Symbols{look.shape, size, 0.3 * size, look.colour, poles(static_cast<int>(i) + 1)});
   }
+  return group;
+}
+
+// Great circles of the sets and the faces, and the rim.
+Group draw_planes(const NetContent& content, const NetFrame& frame) {
+  Group group;
+  add(group, draw_mean_planes(content, frame));
+  add(group, draw_faces(content, frame));
+  add(group, rim_and_north(frame));
   return group;
 }
 
@@ -120,8 +142,8 @@ Group draw_means(const NetContent& content, const NetFrame& frame) {
   std::vector<Point> means;
   for (std::size_t i = 0; i < content.sets.sets.size(); ++i) {
     const SetStatistics& set = content.sets.sets[i];
-    const Colour colour = style::set_style(i + 1).colour;
-    add_cone(group, frame, set, set.variability_cone, {colour, 0.25, {1.4, 0.9}, false});
+    const Colour colour = is_crowd(content.readings) ? style::kInk : style::set_style(i + 1).colour;
+    add_cone(group, frame, set, set.variability_cone, {colour, 0.3, {1.4, 0.9}, false});
     add_cone(group, frame, set, set.confidence_cone, {style::kWhite, 0.75, {}, false});
     add_cone(group, frame, set, set.confidence_cone, {style::kInk, 0.25, {}, false});
     means.push_back(on_page(frame, mean_pole(set)));
@@ -206,7 +228,14 @@ std::vector<Point> pole_places(const NetFrame& frame, const Readings& readings,
                                const std::vector<int>& assignment, int set) {
   std::vector<Point> places;
   for (std::size_t i = 0; i < readings.size(); ++i) {
-    if (assignment[i] == set) places.push_back(on_page(frame, readings.normals[i]));
+    if (assignment[i] != set) continue;
+    Point place = on_page(frame, readings.normals[i]);
+    if (is_crowd(readings)) {
+      // Symbols closer than the eye can tell become one.
+      place = {std::round(place.x_mm / kGrain_mm) * kGrain_mm,
+               std::round(place.y_mm / kGrain_mm) * kGrain_mm};
+    }
+    places.push_back(place);
   }
   std::sort(places.begin(), places.end(), [](const Point& a, const Point& b) {
     return a.x_mm != b.x_mm ? a.x_mm < b.x_mm : a.y_mm < b.y_mm;
@@ -232,13 +261,15 @@ Group draw_stereonet(const NetContent& content, const NetFrame& frame, const Lab
   }
   if (content.density != nullptr) add(group, draw_density(content, frame));
   add(group, grid_lines(frame, 10));
-  add(group, draw_mean_planes(content, frame));
-  add(group, draw_faces(content, frame));
-  add(group, rim_and_north(frame));
-  const bool crowded = content.readings.size() > kCrowd;
-  if (content.density != nullptr && !crowded) add(group, draw_contours(content, frame));
-  add(group, draw_poles(content, frame));
-  if (content.density != nullptr && crowded) add(group, draw_contours(content, frame));
+  if (is_crowd(content.readings)) {
+    add(group, draw_poles(content, frame));
+    if (content.density != nullptr) add(group, draw_contours(content, frame));
+    add(group, draw_planes(content, frame));
+  } else {
+    if (content.density != nullptr) add(group, draw_contours(content, frame));
+    add(group, draw_planes(content, frame));
+    add(group, draw_poles(content, frame));
+  }
   add(group, draw_means(content, frame));
   const auto labels = rim_labels(content);
   add(group, draw_rim_labels(frame, labels,
@@ -253,7 +284,8 @@ Group draw_key(const NetContent& content, Point at, double width_mm) {
   if (content.sets.unassigned > 0) {
     const bool any_set = !content.sets.sets.empty();
     key.entry(1.8, any_set ? "pole of a reading in no set" : "pole of a reading", [&](Point p) {
-      add(group, Symbols{Shape::ring, 1.7, 0.27, style::kMuted, {{p.x_mm + 0.9, p.y_mm}}});
+      const auto stray = stray_style(content.readings);
+      add(group, Symbols{stray.shape, 1.7, 0.27, stray.colour, {{p.x_mm + 0.9, p.y_mm}}});
     });
   }
   if (!content.sets.sets.empty()) {

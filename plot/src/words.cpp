@@ -45,11 +45,13 @@ std::string leading_sets(const ModeCount& counts, const SetsResult& sets, bool p
   std::stable_sort(by_set.begin(), by_set.end(), [](const SetCount& a, const SetCount& b) {
     return a.admissible > b.admissible;
   });
-  const std::string first = source_name(sets, by_set[0], pairs);
-  if (by_set.size() == 1) return "all from " + first;
-  const std::string lead = fmt::format("{} {}", grouped(by_set[0].admissible), first);
-  return fmt::format("{}, then {} {}", lead, grouped(by_set[1].admissible),
-                     source_name(sets, by_set[1], pairs));
+  if (by_set.size() == 1) return "all from " + source_name(sets, by_set[0], pairs);
+  const auto part = [&](const SetCount& count) {
+    const bool one_stray = !pairs && count.set_a == 0 && count.admissible == 1;
+    return one_stray ? "1 stray"
+                     : grouped(count.admissible) + " " + source_name(sets, count, pairs);
+  };
+  return part(by_set[0]) + ", then " + part(by_set[1]);
 }
 
 }  // namespace

@@ -206,6 +206,9 @@ TEST(Words, CountsSayWhereTheyComeFrom) {
   counts.by_set[2].admissible = 3;
   words = count_in_words(Mode::planar_sliding, counts, s.sets, false);
   EXPECT_EQ(words.leading, "12 J1, then 3 strays");
+  counts.by_set[2].admissible = 1;
+  words = count_in_words(Mode::planar_sliding, counts, s.sets, false);
+  EXPECT_EQ(words.leading, "12 J1, then 1 stray");
   counts.by_set = {{0, 1, 30, 9, 0, 0}, {1, 2, 20, 3, 0, 0}};
   words = count_in_words(Mode::wedge_sliding, counts, s.sets, false);
   EXPECT_EQ(words.leading, "9 J1 with strays, then 3 J1 with J2");

@@ -37,7 +37,7 @@ Group draw_stereonet(const NetContent& content, const NetFrame& frame, const Lab
 Group draw_key(const NetContent& content, Point at, double width_mm);
 
 // Poles of the readings with this assignment (0: no set), on the page; each place once, in a fixed
-// order.
+// order. Of more than 3000 readings, places are told apart to 0.05 mm.
 std::vector<Point> pole_places(const NetFrame& frame, const Readings& readings,
                                const std::vector<int>& assignment, int set);
 
