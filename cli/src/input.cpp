@@ -280,7 +280,8 @@ namespace {
 Readings read_files(const std::vector<std::string>& files, const ReadingOptions& options,
                     Streams& streams) {
   if (files.empty()) {
-    throw option_error("FILE", {}, "is missing", "one or more files of readings, or -");
+    throw Error(ErrorKind::argument, Place{.key = "FILE"}, "is missing", {},
+                "one or more files of readings, or - for standard input");
   }
   if (std::count(files.begin(), files.end(), "-") > 1) {
     throw option_error("FILE", "-", "is named twice", "standard input once");
@@ -343,8 +344,8 @@ void require_usable(const Readings& readings, const InputOptions& options) {
   const bool none = readings.size() == 0;
   if (!none && (!options.strict || readings.rejected.empty())) return;
   const std::string counts =
-      fmt::format("{} rows read, {} rejected, {} left out by a filter", readings.read,
-                  readings.rejected.size(), readings.filtered);
+      fmt::format("{} row{} read, {} rejected, {} left out by a filter", readings.read,
+                  readings.read == 1 ? "" : "s", readings.rejected.size(), readings.filtered);
   if (readings.rejected.empty()) {
     const std::string file = readings.files.empty() ? "" : readings.files.front().name;
     throw Error(ErrorKind::input, Place{.file = file}, "not one usable reading: " + counts, {},

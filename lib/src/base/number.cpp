@@ -4,6 +4,7 @@
 
 #include <charconv>
 #include <cmath>
+#include <cstddef>
 #include <cstdint>
 
 namespace brink {
@@ -29,25 +30,29 @@ std::optional<Number> parse_whole(std::string_view text) {
 std::optional<double> parse_short(std::string_view text) {
   constexpr double kPowers[] = {1e0, 1e1, 1e2,  1e3,  1e4,  1e5,  1e6,  1e7,
                                 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15};
-  const bool negative = !text.empty() && text.front() == '-';
-  if (negative) text.remove_prefix(1);
-  if (text.empty() || text.size() > 16) return std::nullopt;
+  const char* at = text.data();
+  const char* const end = at + text.size();
+  const bool negative = at != end && *at == '-';
+  if (negative) ++at;
+  if (end - at > 16) return std::nullopt;
   std::int64_t digits = 0;
-  std::size_t count = 0;
-  std::size_t point = text.size();
-  for (std::size_t i = 0; i < text.size(); ++i) {
-    const unsigned digit = static_cast<unsigned char>(text[i]) - unsigned{'0'};
-    if (digit <= 9) {
+  const auto take_digits = [&] {
+    const char* const from = at;
+    for (; at != end; ++at) {
+      const unsigned digit = static_cast<unsigned char>(*at) - unsigned{'0'};
+      if (digit > 9) break;
       digits = digits * 10 + digit;
-      ++count;
-    } else if (text[i] == '.' && point == text.size()) {
-      point = i;
-    } else {
-      return std::nullopt;
     }
+    return at - from;
+  };
+  const auto whole = take_digits();
+  std::ptrdiff_t decimals = 0;
+  if (at != end && *at == '.') {
+    ++at;
+    decimals = take_digits();
   }
-  if (count == 0 || count > 15) return std::nullopt;
-  const std::size_t decimals = point == text.size() ? 0 : text.size() - point - 1;
+  const auto count = whole + decimals;
+  if (at != end || count == 0 || count > 15) return std::nullopt;
   const double value = static_cast<double>(digits) / kPowers[decimals];
   return negative ? -value : value;
 }

@@ -281,7 +281,11 @@ class HeadingReader {
       throw Error(ErrorKind::input, place(), "stands where the headings are expected",
                   headings_.text, fmt::format("a first line of headings: {}", kPlaneHeadings));
     }
-    throw Error(ErrorKind::input, place(), missing_part(), headings_.text, kPlaneHeadings);
+    const bool unparted =
+        headings_.cells.size() == 1 && keys_.front().size() + 1 < headings_.text.size();
+    throw Error(ErrorKind::input, place(), missing_part(), headings_.text,
+                (unparted ? "headings parted by commas, semicolons or tabs: " : "") +
+                    std::string(kPlaneHeadings));
   }
 
   std::string missing_part() const {

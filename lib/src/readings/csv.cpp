@@ -66,7 +66,7 @@ CsvReader::CsvReader(std::string_view text, std::string file)
   unquoted_headings_.swap(unquoted_);
   if (!headings_.problem.empty()) {
     throw Error(ErrorKind::input, {file_, headings_.line, headings_.problem_column, {}},
-                "the heading " + headings_.problem, headings_.text, kAccepted);
+                "is a heading that " + headings_.problem, headings_.text);
   }
   while (!headings_.cells.empty() && headings_.cells.back().empty()) headings_.cells.pop_back();
 }

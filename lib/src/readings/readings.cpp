@@ -5,10 +5,12 @@
 #include <algorithm>
 #include <cmath>
 #include <memory>
+#include <stdexcept>
 #include <utility>
 
 #include "brink/base/digest.hpp"
 #include "brink/base/error.hpp"
+#include "brink/base/large_memory.hpp"
 #include "brink/base/number.hpp"
 #include "brink/readings/ags4.hpp"
 #include "brink/readings/columns.hpp"
@@ -36,7 +38,10 @@ class NormalMaker {
   explicit NormalMaker(std::size_t expected_readings) {
     if (expected_readings < kTenths) return;
     table_.reserve(kTenths + 1);
-    for (std::size_t i = 0; i <= kTenths; ++i) table_.push_back(sincos(tenths(i)));
+    for (std::size_t i = 0; i <= kTenths; ++i) {
+      const Angle angle = Angle::degrees(static_cast<double>(i) / 10.0);
+      table_.push_back({angle, sincos(angle)});
+    }
   }
 
   Vector3 operator()(const Plane& plane) const {
@@ -46,16 +51,19 @@ class NormalMaker {
   }
 
  private:
+  struct Entry {
+    Angle angle;
+    SinCos value;
+  };
   static constexpr std::size_t kTenths = 3600;
-  static Angle tenths(std::size_t i) { return Angle::degrees(static_cast<double>(i) / 10.0); }
 
   SinCos look_up(Angle angle) const {  // 0 <= angle <= 360
     if (table_.empty()) return sincos(angle);
-    const auto i = static_cast<std::size_t>(angle.deg() * 10.0 + 0.5);
-    return tenths(i) == angle ? table_[i] : sincos(angle);
+    const Entry& nearest = table_[static_cast<std::size_t>(angle.deg() * 10.0 + 0.5)];
+    return nearest.angle == angle ? nearest.value : sincos(angle);
   }
 
-  std::vector<SinCos> table_;
+  std::vector<Entry> table_;
 };
 
 // A filter and the column of the present file that it looks at.
@@ -68,10 +76,10 @@ class ReadingCollector {
  public:
   explicit ReadingCollector(std::size_t expected) : normal_of_(expected) {
     expected = std::min(expected, std::size_t{1} << 26);
-    readings_.planes.reserve(expected);
-    readings_.normals.reserve(expected);
-    readings_.places.reserve(expected);
-    readings_.weights.reserve(expected);
+    reserve_large(readings_.planes, expected);
+    reserve_large(readings_.normals, expected);
+    reserve_large(readings_.places, expected);
+    reserve_large(readings_.weights, expected);
   }
 
   void read_file(const InputBytes& file, const ReadingOptions& options);
@@ -136,7 +144,8 @@ std::size_t ReadingCollector::extra_index(std::string_view heading) {
   if (known != extra_keys_.end()) return static_cast<std::size_t>(known - extra_keys_.begin());
   extra_keys_.push_back(key);
   readings_.extra.push_back({std::string(heading), {}});
-  readings_.extra.back().cells.reserve(readings_.planes.capacity());
+  constexpr std::size_t kUsualBytes = 8;
+  readings_.extra.back().cells.reserve(readings_.planes.capacity(), kUsualBytes);
   pad(readings_.extra.back().cells);
   return extra_keys_.size() - 1;
 }
@@ -372,6 +381,21 @@ Readings ReadingCollector::finish() {
 }
 
 }  // namespace
+
+void TextCells::push_back(std::string_view cell) {
+  constexpr std::size_t kMost = 0xFFFFFFFF;
+  if (cell.size() > kMost - text_.size()) {
+    throw std::length_error("the texts of a column pass 4 GiB");
+  }
+  text_ += cell;
+  ends_.push_back(static_cast<std::uint32_t>(text_.size()));
+}
+
+void TextCells::reserve(std::size_t cells, std::size_t bytes_each) {
+  text_.reserve(cells * bytes_each);
+  expect_large(text_.data(), text_.capacity());
+  reserve_large(ends_, cells);
+}
 
 const ExtraColumn* Readings::find_column(std::string_view heading) const {
   const std::string key = heading_key(heading);

@@ -3,6 +3,7 @@
 #pragma once
 
 #include <cstddef>
+#include <cstdint>
 #include <optional>
 #include <span>
 #include <string>
@@ -17,9 +18,14 @@
 namespace brink {
 
 // Where a reading stood. `file` indexes Readings::files; lines count from 1, the heading included.
+// Kept small: there is one for each reading.
 struct ReadingPlace {
-  std::size_t file = 0;
-  std::size_t line = 0;
+  ReadingPlace() = default;
+  ReadingPlace(std::size_t file_index, std::size_t line_number)
+      : file(static_cast<std::uint32_t>(file_index)),
+        line(static_cast<std::uint32_t>(line_number)) {}
+  std::uint32_t file = 0;
+  std::uint32_t line = 0;
 };
 
 struct InputFile {
@@ -40,11 +46,10 @@ struct Rejection {
 // Texts in one block of memory: at 10^6 readings a string each would cost more than the rest.
 class TextCells {
  public:
-  void push_back(std::string_view cell) {
-    text_ += cell;
-    ends_.push_back(text_.size());
-  }
-  void reserve(std::size_t cells) { ends_.reserve(cells); }
+  // std::length_error where the texts together pass 4 GiB.
+  void push_back(std::string_view cell);
+  // Room for so many cells of so many bytes each.
+  void reserve(std::size_t cells, std::size_t bytes_each);
   std::size_t size() const { return ends_.size(); }
   bool empty() const { return ends_.empty(); }
   // Valid until the next push_back().
@@ -55,7 +60,7 @@ class TextCells {
 
  private:
   std::string text_;
-  std::vector<std::size_t> ends_;
+  std::vector<std::uint32_t> ends_;
 };
 
 // A column that travels along: one cell a used reading, in reading order; empty where the file of
