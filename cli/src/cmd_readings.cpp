@@ -55,11 +55,15 @@ void check_output(const ReadingsRun& run) {
   }
 }
 
-TableForm table_form(const ReadingsRun& run) {
+TableForm table_form(const ReadingsRun& run, const std::optional<Site>& site) {
   TableForm form;
   form.notation = run.to.value_or(Notation::dip_direction);
   form.strike_rule = run.input.reading.strike_rule.value_or(StrikeRule::right);
   form.hole = run.input.reading.hole;
+  // Weights for the direction of traverses follow from the traverses; in the table they would count
+  // twice when it is read beside them.
+  const BiasOptions& bias = site ? site->bias : run.input.bias;
+  form.with_weights = bias.traverses.empty() || run.input.bias.unweighted;
   return form;
 }
 
@@ -99,7 +103,7 @@ int run_readings(const std::vector<std::string>& files, const ReadingsRun& run, 
   print_warnings(doubts, run.output, streams);
   readings.warnings.insert(readings.warnings.end(), doubts.begin(), doubts.end());
   if (!run.output.output.empty() && readings.size() > 0) {
-    write_output(run.output.output, readings_csv(readings, table_form(run)), streams.out,
+    write_output(run.output.output, readings_csv(readings, table_form(run, site)), streams.out,
                  files_read(files, site));
   }
   if (run.output.json) {
@@ -124,13 +128,11 @@ Command readings_command() {
   command.summary = "Reads, checks and converts orientation readings";
   command.description =
       "Reads CSV files (comma, semicolon or tab) and the discontinuities of AGS4 files by their "
-      "headings and says how many readings were used, which lines were not, and why. Warns of what "
-      "a "
-      "careful person would look at twice: rows that stand twice, dip and direction exchanged, an "
-      "observer whose directions are turned about, rounded values, a set that one traverse alone "
-      "meets, readings in a traverse's blind zone. With -o the readings are written as one table, "
-      "in "
-      "any notation.";
+      "headings. Says how many readings were used, which lines were not, and why. Warns of what "
+      "deserves a second look: rows that stand twice, dip and direction exchanged, an observer "
+      "whose directions are turned about, rounded values, a set that one traverse alone meets, "
+      "readings in a traverse's blind zone. With -o the readings are written as one table, in any "
+      "notation.";
   command.positionals = Positionals::files;
   add_input_options(command.options, run->input);
   add_output_options(command.options, run->output);

@@ -13,6 +13,7 @@
 #include <system_error>
 
 #include "brink/base/error.hpp"
+#include "brink/base/large_memory.hpp"
 #include "brink/record/readings_document.hpp"
 #include "brink/record/site_document.hpp"
 
@@ -158,6 +159,8 @@ struct CloseFile {
 std::string read_open_file(std::FILE* file, const std::string& name, std::size_t claimed) {
   constexpr std::size_t piece = std::size_t{1} << 16;
   std::string bytes;
+  bytes.reserve(claimed + 1);
+  expect_large(bytes.data(), bytes.capacity());
   std::size_t used = 0;
   for (;;) {
     if (used == bytes.size()) bytes.resize(std::max({claimed + 1, used + piece, used + used / 2}));

@@ -27,14 +27,14 @@ std::optional<Number> parse_whole(std::string_view text) {
 // Up to 15 digits with at most one point, the form of nearly every field reading. The digits as an
 // integer and the power of ten are both exact doubles, so their quotient is the correctly rounded
 // value, the same bits as from_chars gives (Clinger 1990, PLDI '90, 92-101).
-std::optional<double> parse_short(std::string_view text) {
+bool parse_short(std::string_view text, double& value) {
   constexpr double kPowers[] = {1e0, 1e1, 1e2,  1e3,  1e4,  1e5,  1e6,  1e7,
                                 1e8, 1e9, 1e10, 1e11, 1e12, 1e13, 1e14, 1e15};
   const char* at = text.data();
   const char* const end = at + text.size();
   const bool negative = at != end && *at == '-';
   if (negative) ++at;
-  if (end - at > 16) return std::nullopt;
+  if (end - at > 16) return false;
   std::int64_t digits = 0;
   const auto take_digits = [&] {
     const char* const from = at;
@@ -52,15 +52,16 @@ std::optional<double> parse_short(std::string_view text) {
     decimals = take_digits();
   }
   const auto count = whole + decimals;
-  if (at != end || count == 0 || count > 15) return std::nullopt;
-  const double value = static_cast<double>(digits) / kPowers[decimals];
-  return negative ? -value : value;
+  if (at != end || count == 0 || count > 15) return false;
+  value = static_cast<double>(digits) / kPowers[decimals];
+  if (negative) value = -value;
+  return true;
 }
 
 }  // namespace
 
 std::optional<double> parse_decimal(std::string_view text) {
-  if (const auto value = parse_short(text)) return value;
+  if (double plain = 0.0; parse_short(text, plain)) return plain;
   const auto value = parse_whole<double>(text);
   return value && std::isfinite(*value) ? value : std::nullopt;
 }

@@ -1,7 +1,5 @@
 #include "check_support.hpp"
 
-#include <fmt/format.h>
-
 #include <algorithm>
 #include <cmath>
 
@@ -23,22 +21,6 @@ double kernel(const Vector3& a, const Vector3& b) {
 }
 
 }  // namespace
-
-std::string name_readings(const Readings& readings, const std::vector<std::size_t>& indices) {
-  constexpr std::size_t kNamed = 10;
-  std::string text;
-  for (std::size_t i = 0; i < std::min(indices.size(), kNamed); ++i) {
-    const ReadingPlace& place = readings.places[indices[i]];
-    const bool last = i > 0 && i + 1 == indices.size();
-    text += fmt::format("{}{}:{}",
-                        i == 0 ? ""
-                        : last ? " and "
-                               : ", ",
-                        readings.files[place.file].name, place.line);
-  }
-  if (indices.size() > kNamed) text += fmt::format(" and {} more", indices.size() - kNamed);
-  return text;
-}
 
 std::map<std::string, std::vector<std::size_t>> readings_by(const Readings& readings,
                                                             const ExtraColumn& column) {

@@ -1,4 +1,4 @@
-// What the checks of readings share: naming lines, groups of readings, a density to compare with.
+// What the checks of readings share: groups of readings, and a density to compare with.
 #pragma once
 
 #include <map>
@@ -12,9 +12,6 @@ namespace brink {
 
 // The checks that look at single readings stop here: larger files come from instruments.
 inline constexpr std::size_t kMostByHand = 20'000;
-
-// "pit.csv:5, pit.csv:9 and 12 more" for readings by index.
-std::string name_readings(const Readings& readings, const std::vector<std::size_t>& indices);
 
 // The readings of each value of a column, in the order of the values; empty cells are left out.
 std::map<std::string, std::vector<std::size_t>> readings_by(const Readings& readings,

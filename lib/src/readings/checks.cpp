@@ -12,6 +12,7 @@
 #include "brink/base/random.hpp"
 #include "brink/base/ties.hpp"
 #include "check_support.hpp"
+#include "lines_in_words.hpp"
 
 namespace brink {
 
@@ -87,7 +88,7 @@ std::vector<std::string> repeated_ids(const Readings& readings, const ExtraColum
   }
   if (repeated.empty()) return {};
   std::sort(repeated.begin(), repeated.end());
-  return {fmt::format("{}: the same {} stands on several rows", name_readings(readings, repeated),
+  return {fmt::format("{}: the same {} stands on several rows", lines_in_words(readings, repeated),
                       printable(ids.heading))};
 }
 
@@ -123,7 +124,7 @@ std::vector<std::string> repeated_positions(const Readings& readings,
   if (poisson_tail(repeated.size(), pairs_here * chance) >= kRare) return {};
   std::sort(repeated.begin(), repeated.end());
   return {fmt::format("{}: {} equal in every column to a row before, position included",
-                      name_readings(readings, repeated),
+                      lines_in_words(readings, repeated),
                       repeated.size() == 1 ? "the row is" : "the rows are")};
 }
 
@@ -173,9 +174,10 @@ std::vector<std::string> repeated_rows(const Readings& readings) {
     const ReadingPlace& from = readings.places[block.again];
     const ReadingPlace& to = readings.places[block.again + block.length - 1];
     const ReadingPlace& source = readings.places[block.first];
-    warnings.push_back(fmt::format("{}:{} to {}: these {} readings repeat those from {}:{} on",
-                                   readings.files[from.file].name, from.line, to.line, block.length,
-                                   readings.files[source.file].name, source.line));
+    warnings.push_back(
+        fmt::format("{}: lines {} to {}: these {} readings repeat those from {}, line {} on",
+                    readings.files[from.file].name, from.line, to.line, block.length,
+                    readings.files[source.file].name, source.line));
   }
   return warnings;
 }
@@ -236,10 +238,12 @@ std::vector<std::string> check_heaping(const Readings& readings) {
   }
   std::vector<std::string> warnings;
   if (readings.size() == 0) return warnings;
-  const std::string lines =
-      fmt::format("{}:{} to {}:{}", readings.files[readings.places.front().file].name,
-                  readings.places.front().line, readings.files[readings.places.back().file].name,
-                  readings.places.back().line);
+  const ReadingPlace& first = readings.places.front();
+  const ReadingPlace& last = readings.places.back();
+  const std::string& file = readings.files[first.file].name;
+  const std::string lines = first.file == last.file
+                                ? fmt::format("{}: lines {} to {}", file, first.line, last.line)
+                                : fmt::format("{} to {}", file, readings.files[last.file].name);
   for (const auto& text :
        {heaping_of(dips, "dips are"), heaping_of(directions, "directions are")}) {
     if (text) warnings.push_back(fmt::format("{}: {}", lines, *text));
@@ -277,7 +281,7 @@ std::vector<std::string> check_single_traverse_sets(const Readings& readings) {
         fmt::format("{}: set {} is met by traverse {} alone ({} readings; the traverse has {:.0f} "
                     "% of all): it "
                     "is local, or the others run along it",
-                    name_readings(readings, members), printable(set), printable(traverse),
+                    lines_in_words(readings, members), printable(set), printable(traverse),
                     members.size(), 100.0 * there / all));
   }
   return warnings;
@@ -304,7 +308,7 @@ std::vector<std::string> check_blind_zones(const Readings& readings) {
     warnings.push_back(fmt::format(
         "{}: within 15 degrees of the line of their traverse{}, which meets few of "
         "such planes: there are more than it shows",
-        name_readings(readings, members), traverse.empty() ? "" : " " + printable(traverse)));
+        lines_in_words(readings, members), traverse.empty() ? "" : " " + printable(traverse)));
   }
   return warnings;
 }

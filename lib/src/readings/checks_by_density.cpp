@@ -13,6 +13,7 @@
 #include "brink/base/error.hpp"
 #include "brink/readings/checks.hpp"
 #include "check_support.hpp"
+#include "lines_in_words.hpp"
 
 namespace brink {
 
@@ -129,7 +130,7 @@ std::vector<std::string> check_swapped(const Readings& readings) {
     warnings.push_back(fmt::format(
         "{}: {} lies far from all others, {} would lie among them: are dip and dip direction "
         "swapped?",
-        name_readings(readings, {i}), print_plane(plane, Notation::dip_direction),
+        lines_in_words(readings, {i}), print_plane(plane, Notation::dip_direction),
         print_plane({plane.dip_direction, plane.dip}, Notation::dip_direction)));
   }
   return warnings;
@@ -155,7 +156,8 @@ std::vector<std::string> check_reversed(const Readings& readings) {
     warnings.push_back(fmt::format(
         "{}: the directions of {} fit the other readings only when turned by 180 degrees ({} of {} "
         "fit better so)",
-        name_readings(readings, members), printable(groups.names[g]), e.prefer_turned, e.readings));
+        lines_in_words(readings, members), printable(groups.names[g]), e.prefer_turned,
+        e.readings));
   }
   return warnings;
 }

@@ -170,7 +170,7 @@ std::string readings_csv(const Readings& readings, const TableForm& form) {
   }
   const auto [least, greatest] =
       std::minmax_element(readings.weights.begin(), readings.weights.end());
-  const bool weighted = !readings.weights.empty() && *least != *greatest;
+  const bool weighted = form.with_weights && !readings.weights.empty() && *least != *greatest;
   const auto beside = columns_beside(readings);
   std::string csv;
   const auto add_row = [&](const std::vector<std::string>& plane_cells, std::string_view weight,

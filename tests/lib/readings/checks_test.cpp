@@ -93,8 +93,8 @@ TEST(Checks, SwappedDipAndDirectionAreNamed) {
   field.rows[30] = "24,71";
   field.rows[77] = "27,69";
   const auto warnings = check_swapped(field.read());
-  EXPECT_TRUE(mentions(warnings, "t.csv:32: 24/071")) << ::testing::PrintToString(warnings);
-  EXPECT_TRUE(mentions(warnings, "t.csv:79: 27/069"));
+  EXPECT_TRUE(mentions(warnings, "t.csv: line 32: 24/071")) << ::testing::PrintToString(warnings);
+  EXPECT_TRUE(mentions(warnings, "t.csv: line 79: 27/069"));
   EXPECT_LE(warnings.size(), 3U);
 }
 
@@ -110,7 +110,7 @@ TEST(Checks, AnObserverTurnedAboutIsNamed) {
   const auto warnings = check_reversed(field.read());
   ASSERT_EQ(warnings.size(), 1U) << ::testing::PrintToString(warnings);
   EXPECT_TRUE(mentions(warnings, "the directions of B fit"));
-  EXPECT_TRUE(mentions(warnings, "t.csv:2, "));
+  EXPECT_TRUE(mentions(warnings, "t.csv: lines 2, "));
 }
 
 TEST(Checks, HeapedValuesAreReportedWithTheirShare) {
@@ -123,7 +123,7 @@ TEST(Checks, HeapedValuesAreReportedWithTheirShare) {
   const auto warnings = check_heaping(field.read());
   ASSERT_EQ(warnings.size(), 1U) << ::testing::PrintToString(warnings);
   EXPECT_TRUE(mentions(warnings, "dips are heaped"));
-  EXPECT_TRUE(mentions(warnings, "t.csv:2 to t.csv:201"));
+  EXPECT_TRUE(mentions(warnings, "t.csv: lines 2 to 201"));
   EXPECT_TRUE(check_heaping(three_sets(3, 200).read()).empty());
 }
 
@@ -131,14 +131,14 @@ TEST(Checks, RepeatedRowsAreFoundByIdPositionOrBlock) {
   Field ids = three_sets(5, 20);
   ids.headings += ",id";
   for (std::size_t i = 0; i < 20; ++i) ids.rows[i] += "," + std::to_string(i == 7 ? 3 : i);
-  EXPECT_TRUE(mentions(check_duplicates(ids.read()), "t.csv:5 and t.csv:9"));
+  EXPECT_TRUE(mentions(check_duplicates(ids.read()), "t.csv: lines 5, 9"));
 
   Field positions = three_sets(5, 40);
   positions.headings += ",traverse,position";
   for (std::size_t i = 0; i < 40; ++i) positions.rows[i] += ",T1," + std::to_string(i) + ".25";
   EXPECT_TRUE(check_duplicates(positions.read()).empty());
   positions.rows[12] = positions.rows[11];
-  EXPECT_TRUE(mentions(check_duplicates(positions.read()), "t.csv:14: the row is equal"));
+  EXPECT_TRUE(mentions(check_duplicates(positions.read()), "t.csv: line 14: the row is equal"));
 
   Field blocks = three_sets(5, 120);
   EXPECT_TRUE(check_duplicates(blocks.read()).empty());
@@ -147,7 +147,8 @@ TEST(Checks, RepeatedRowsAreFoundByIdPositionOrBlock) {
   for (std::size_t i = 20; i < 40; ++i) blocks.rows.push_back(blocks.rows[i]);
   const auto warnings = check_duplicates(blocks.read());
   ASSERT_EQ(warnings.size(), 1U) << ::testing::PrintToString(warnings);
-  EXPECT_TRUE(mentions(warnings, "t.csv:123 to 142: these 20 readings repeat those from t.csv:22"));
+  EXPECT_TRUE(mentions(
+      warnings, "t.csv: lines 123 to 142: these 20 readings repeat those from t.csv, line 22"));
 }
 
 TEST(Checks, SetOfOneTraverse) {
@@ -172,7 +173,7 @@ TEST(Checks, ReadingsInTheBlindZone) {
                 "90,166,T1,90,0", "10,0,T1,90,0",   "90,0,T1,,"};
   const auto warnings = check_blind_zones(field.read());
   ASSERT_EQ(warnings.size(), 1U);
-  EXPECT_TRUE(mentions(warnings, "t.csv:5 and t.csv:6: within 15 degrees")) << warnings[0];
+  EXPECT_TRUE(mentions(warnings, "t.csv: lines 5, 6: within 15 degrees")) << warnings[0];
 }
 
 TEST(Checks, NothingToCheckIsNoTrouble) {

@@ -28,10 +28,11 @@ struct TableForm {
   Notation notation = Notation::dip_direction;
   StrikeRule strike_rule = StrikeRule::right;  // of the notation strike/dip; its heading names it
   std::optional<Hole> hole;                    // the notation core needs it: Error(argument)
+  bool with_weights = true;                    // a column weight, where weights differ
 };
 
 // CSV (RFC 4180 with line feeds) that read_readings() reads as the same planes: the columns of the
-// plane, the weight where weights differ, then the other columns, without those that say where the
+// plane, the weight, then the other columns, without those that say where the
 // plane lies in another notation. Numbers are exact in dip/dip-direction and good to 1e-10 degrees
 // otherwise.
 std::string readings_csv(const Readings& readings, const TableForm& form);
