@@ -3,6 +3,7 @@
 
 #include "brink/base/error.hpp"
 #include "brink/base/number.hpp"
+#include "brink/record/simulation_document.hpp"
 #include "brink/record/wedge_document.hpp"
 #include "brink/risk/wedge_variation.hpp"
 #include "commands.hpp"
@@ -66,9 +67,12 @@ struct WedgeAnswer {
   std::optional<WedgeSupport> support;
   std::vector<SensitivityCurve> curves;
   std::optional<BackAnalysis> back_analysis;
+  std::optional<WedgeSimulation> simulation;
+  std::optional<SimulationResult> simulated;
+  std::vector<std::string> warnings;
 };
 
-WedgeAnswer answer(const WedgeOptions& o) {
+WedgeAnswer answer(const WedgeOptions& o, Streams& streams) {
   WedgeAnswer a;
   a.wedge = wedge_case(o);
   a.target = wedge_target(o);
@@ -76,34 +80,52 @@ WedgeAnswer answer(const WedgeOptions& o) {
   if (a.target && a.result.forms) a.support = support_wedge(a.wedge, a.result, *a.target);
   a.curves = curves_of(a.wedge, o);
   a.back_analysis = back_analysis_of(a.wedge, o);
+  a.warnings = a.result.warnings;
+  if (o.simulation.draws) {
+    a.simulation = simulation_of(uncertain_wedge(o), o.simulation, o.output, streams);
+    a.simulated = simulate_wedge(*a.simulation);
+    a.warnings.insert(a.warnings.end(), a.simulated->warnings.begin(), a.simulated->warnings.end());
+  }
   return a;
 }
 
 std::string json(const WedgeAnswer& a) {
+  Object inputs = wedge_inputs(a.wedge, a.result, a.target);
+  inputs.add("simulation", a.simulation ? simulation_inputs(*a.simulation) : Value());
   Object result = wedge_value(a.result, a.support);
   result.add("sensitivity", sensitivity_value(a.curves));
   result.add("solve", a.back_analysis ? back_analysis_value(*a.back_analysis) : Value());
-  return to_json(result_document("wedge", wedge_inputs(a.wedge, a.result, a.target),
-                                 a.result.warnings, std::move(result)));
+  result.add("simulation", a.simulated
+                               ? simulation_value(*a.simulated, a.simulation->target.has_value())
+                               : Value());
+  return to_json(result_document("wedge", std::move(inputs), a.warnings, std::move(result)));
 }
 
 std::string text(const WedgeAnswer& a) {
   std::string more = sensitivity_text(a.curves);
   if (a.back_analysis) more += back_analysis_text(*a.back_analysis);
+  if (a.simulated) more += simulation_text(*a.simulation, *a.simulated);
   return wedge_text(a.wedge, a.result, a.support, more);
 }
 
-int run(const WedgeOptions& o, Streams& streams) {
-  if (!o.output.output.empty()) {
-    known_ending("--output", o.output.output, {".csv"});
-    if (o.sensitivity.vary.empty()) {
-      throw Error(ErrorKind::argument, Place{.key = "--output"}, "has nothing to write", {},
-                  "--vary with it");
-    }
+void check_output(const WedgeOptions& o) {
+  if (o.output.output.empty()) return;
+  known_ending("--output", o.output.output, {".csv"});
+  if (o.sensitivity.vary.empty() != o.simulation.draws.has_value()) {
+    throw Error(ErrorKind::argument, Place{.key = "--output"},
+                "writes the curves of --vary or the histogram of --draws", {}, "one of the two");
   }
-  const WedgeAnswer a = answer(o);
-  print_warnings(a.result.warnings, o.output, streams);
-  if (!o.output.output.empty()) write_file(o.output.output, sensitivity_csv(a.curves));
+}
+
+int run(const WedgeOptions& o, Streams& streams) {
+  check_output(o);
+  const WedgeAnswer a = answer(o, streams);
+  print_warnings(a.warnings, o.output, streams);
+  if (!o.output.output.empty()) {
+    write_file(o.output.output,
+               a.simulated ? histogram_csv(*a.simulated) : sensitivity_csv(a.curves),
+               o.simulation.readings);
+  }
   streams.out << (o.output.json ? json(a) : text(a));
   return kDone;
 }
@@ -120,8 +142,9 @@ Command wedge_command() {
       "equilibrium: it slides on both planes, on one, or lifts, whichever the forces ask for. A "
       "wedge that does not form is a result: the program says why.";
   add_wedge_options(command.options, *state);
-  command.options.push_back(
-      output_option("OUT.csv", "Writes the curves of --vary as a table.", state->output));
+  command.options.push_back(output_option(
+      "OUT.csv", "Writes the curves of --vary, or the histogram of --draws, as a table.",
+      state->output));
   add_output_options(command.options, state->output);
   command.examples = {
       {"brink wedge --plane1 45/105 --plane2 70/235 --face 65/185 --height 30 --unit-weight 26 "
@@ -135,7 +158,11 @@ Command wedge_command() {
        "--friction 25 --cohesion 20 --target 1.5 --bolt-plunge -10..20 --vary friction=20..35 "
        "--vary water-fill=0..1 --solve height",
        "The least bolt for a target, what friction and water do, and the height that reaches the "
-       "target."}};
+       "target."},
+      {"brink wedge --plane1 45/105 --plane2 70/235 --face 65/185 --height 30 --unit-weight 26 "
+       "--friction 'normal(30,3)' --cohesion 'uniform(0,40)' --fisher-k1 80 --fisher-k2 60 "
+       "--water-fill 'uniform(0,1)' --draws 10000",
+       "How likely the wedge forms and fails."}};
   command.run = [state](const std::vector<std::string>&, Streams& streams) {
     return run(*state, streams);
   };

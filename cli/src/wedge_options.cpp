@@ -74,26 +74,26 @@ void add_strength_options(std::vector<Option>& options, WedgeOptions& o) {
   const std::string group = "Rock and joints";
   options.push_back(required(number_option("--unit-weight", "KN_M3", "Unit weight of the rock.",
                                            above(0.0, "kN/m3"), o.wedge.unit_weight_kN_m3, group)));
-  options.push_back(number_option("--friction", "DEG",
-                                  "Friction angle of both planes, 0 to below 90 degrees.",
-                                  kFriction, o.friction, group));
-  options.push_back(with_default(
-      number_option("--cohesion", "KPA", "Cohesion of both planes.", kPressure, o.cohesion, group),
-      "0"));
-  options.push_back(number_option("--friction1", "DEG", "Friction angle of plane 1 alone.",
-                                  kFriction, o.friction1, group));
-  options.push_back(number_option("--friction2", "DEG", "Friction angle of plane 2 alone.",
-                                  kFriction, o.friction2, group));
-  options.push_back(number_option("--cohesion1", "KPA", "Cohesion of plane 1 alone.", kPressure,
-                                  o.cohesion1, group));
-  options.push_back(number_option("--cohesion2", "KPA", "Cohesion of plane 2 alone.", kPressure,
-                                  o.cohesion2, group));
+  options.push_back(uncertain_option("--friction", "DEG",
+                                     "Friction angle of both planes, 0 to below 90 degrees.",
+                                     kFriction, o.friction, group));
+  options.push_back(with_default(uncertain_option("--cohesion", "KPA", "Cohesion of both planes.",
+                                                  kPressure, o.cohesion, group),
+                                 "0"));
+  options.push_back(uncertain_option("--friction1", "DEG", "Friction angle of plane 1 alone.",
+                                     kFriction, o.friction1, group));
+  options.push_back(uncertain_option("--friction2", "DEG", "Friction angle of plane 2 alone.",
+                                     kFriction, o.friction2, group));
+  options.push_back(uncertain_option("--cohesion1", "KPA", "Cohesion of plane 1 alone.", kPressure,
+                                     o.cohesion1, group));
+  options.push_back(uncertain_option("--cohesion2", "KPA", "Cohesion of plane 2 alone.", kPressure,
+                                     o.cohesion2, group));
 }
 
 void add_water_options(std::vector<Option>& options, WedgeOptions& o) {
   const std::string group = "Water";
   options.push_back(with_default(
-      number_option(
+      uncertain_option(
           "--water-fill", "F",
           "How full of water the planes and the crack are, 0 (dry) to 1 (full). Full is a "
           "mean pressure of unit weight x height / 6, or with a crack x its depth / 3.",
@@ -185,10 +185,11 @@ void add_load_options(std::vector<Option>& options, WedgeOptions& o) {
       number_option("--surcharge", "KPA", "Vertical load on the upper ground, per horizontal area.",
                     kPressure, o.wedge.surcharge_kPa, group),
       "0"));
-  options.push_back(with_default(
-      number_option("--seismic-horizontal", "K", "Horizontal earthquake load, share of the weight.",
-                    at_least_value(0.0), o.seismic_horizontal, group),
-      "0"));
+  options.push_back(
+      with_default(uncertain_option("--seismic-horizontal", "K",
+                                    "Horizontal earthquake load, share of the weight.",
+                                    at_least_value(0.0), o.seismic_horizontal, group),
+                   "0"));
   Option trend;
   trend.name = "--seismic-trend";
   trend.value = "DEG";
@@ -252,30 +253,59 @@ WedgeSize size_of(const WedgeOptions& o) {
 }
 
 // Value of one plane: its own option, or the one for both.
-double for_plane(const std::optional<double>& own, const std::optional<double>& both,
-                 const std::string& own_name, const std::string& both_name,
-                 const std::optional<double>& otherwise) {
+Distribution for_plane(const std::optional<Distribution>& own,
+                       const std::optional<Distribution>& both, const std::string& own_name,
+                       const std::string& both_name, const std::optional<double>& otherwise) {
   if (own && both) {
     throw option_error(own_name, "is given together with " + both_name, "one of the two");
   }
   if (own) return *own;
   if (both) return *both;
-  if (otherwise) return *otherwise;
+  if (otherwise) return fixed_value(*otherwise);
   throw option_error(own_name, "is missing", both_name + " for both planes or one for each");
 }
 
+Distribution cohesion_of(const WedgeOptions& o, bool first) {
+  return for_plane(first ? o.cohesion1 : o.cohesion2, o.cohesion,
+                   first ? "--cohesion1" : "--cohesion2", "--cohesion", 0.0);
+}
+
+Distribution friction_of(const WedgeOptions& o, bool first) {
+  return for_plane(first ? o.friction1 : o.friction2, o.friction,
+                   first ? "--friction1" : "--friction2", "--friction", std::nullopt);
+}
+
+double median(const Distribution& distribution) {
+  return quantile(distribution, 0.5);
+}
+
 MohrCoulomb strength_of(const WedgeOptions& o, bool first) {
-  const std::string number = first ? "1" : "2";
-  const double cohesion_kPa = for_plane(first ? o.cohesion1 : o.cohesion2, o.cohesion,
-                                        "--cohesion" + number, "--cohesion", 0.0);
-  const double friction_deg = for_plane(first ? o.friction1 : o.friction2, o.friction,
-                                        "--friction" + number, "--friction", std::nullopt);
-  return {cohesion_kPa, Angle::degrees(friction_deg)};
+  return {median(cohesion_of(o, first)), Angle::degrees(median(friction_of(o, first)))};
+}
+
+bool varies(const std::optional<Distribution>& distribution) {
+  return distribution && distribution->shape != DistributionShape::fixed;
+}
+
+// What only a simulation can use.
+void refuse_without_draws(const WedgeOptions& o) {
+  if (o.simulation.draws) return;
+  const std::pair<const std::optional<Distribution>&, const char*> inputs[] = {
+      {o.friction, "--friction"},     {o.friction1, "--friction1"},
+      {o.friction2, "--friction2"},   {o.cohesion, "--cohesion"},
+      {o.cohesion1, "--cohesion1"},   {o.cohesion2, "--cohesion2"},
+      {o.water_fill, "--water-fill"}, {o.seismic_horizontal, "--seismic-horizontal"}};
+  for (const auto& [input, name] : inputs) {
+    if (varies(input)) throw option_error(name, "is a distribution", "a number, or --draws N");
+  }
+  if (const auto lone = needs_draws(o.simulation)) {
+    throw option_error(*lone, "is given without --draws", "--draws N with it");
+  }
 }
 
 WedgeWater water_of(const WedgeOptions& o) {
   if (!o.water_pressure1 && !o.water_pressure2 && !o.water_pressure_crack) {
-    return WaterFill{o.water_fill.value_or(0.0)};
+    return WaterFill{o.water_fill ? median(*o.water_fill) : 0.0};
   }
   if (o.water_fill) {
     throw option_error("--water-fill", "is given together with stated water pressures",
@@ -314,21 +344,39 @@ void add_wedge_options(std::vector<Option>& options, WedgeOptions& target) {
   add_load_options(options, target);
   add_target_options(options, target);
   add_sensitivity_options(options, target.sensitivity, variable_names());
+  add_simulation_options(options, target.simulation);
 }
 
 WedgeCase wedge_case(const WedgeOptions& o) {
+  refuse_without_draws(o);
   WedgeCase w = o.wedge;
   w.geometry.size = size_of(o);
   w.geometry.crack = crack_of(o);
   w.strength1 = strength_of(o, true);
   w.strength2 = strength_of(o, false);
   w.water = water_of(o);
-  w.seismic.horizontal = o.seismic_horizontal.value_or(0.0);
+  w.seismic.horizontal = o.seismic_horizontal ? median(*o.seismic_horizontal) : 0.0;
   if (w.seismic.trend && !o.seismic_horizontal) {
     throw option_error("--seismic-trend", "is given without --seismic-horizontal",
                        "both or neither");
   }
   return w;
+}
+
+WedgeSimulation uncertain_wedge(const WedgeOptions& o) {
+  const auto if_it_varies = [](const Distribution& d) {
+    return varies(d) ? std::optional(d) : std::nullopt;
+  };
+  WedgeSimulation s;
+  s.wedge = wedge_case(o);
+  s.friction1 = if_it_varies(friction_of(o, true));
+  s.friction2 = if_it_varies(friction_of(o, false));
+  s.cohesion1 = if_it_varies(cohesion_of(o, true));
+  s.cohesion2 = if_it_varies(cohesion_of(o, false));
+  if (varies(o.water_fill)) s.water_fill = o.water_fill;
+  if (varies(o.seismic_horizontal)) s.seismic = o.seismic_horizontal;
+  s.target = o.target;
+  return s;
 }
 
 std::optional<WedgeTarget> wedge_target(const WedgeOptions& o) {

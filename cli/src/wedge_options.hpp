@@ -8,6 +8,7 @@
 #include "brink/mechanics/wedge_support.hpp"
 #include "options.hpp"
 #include "sensitivity_options.hpp"
+#include "simulation_options.hpp"
 
 namespace brink::cli {
 
@@ -18,13 +19,15 @@ struct WedgeOptions {
   std::optional<double> target;
   std::optional<std::pair<Angle, Angle>> bolt_plunge;
   std::optional<Line> bolt_direction;
-  std::optional<double> friction, friction1, friction2;
-  std::optional<double> cohesion, cohesion1, cohesion2;
+  // Numbers, or distributions with --draws.
+  std::optional<Distribution> friction, friction1, friction2;
+  std::optional<Distribution> cohesion, cohesion1, cohesion2;
+  std::optional<Distribution> water_fill, seismic_horizontal;
   std::optional<Plane> crack;
   std::optional<double> crack_distance;
-  std::optional<double> seismic_horizontal;
-  std::optional<double> water_fill, water_pressure1, water_pressure2, water_pressure_crack;
+  std::optional<double> water_pressure1, water_pressure2, water_pressure_crack;
   SensitivityOptions sensitivity;
+  SimulationOptions simulation;
   OutputOptions output;
 };
 
@@ -33,7 +36,11 @@ void add_wedge_options(std::vector<Option>& options, WedgeOptions& target);
 
 // The case that the options describe. Throws ErrorKind::argument naming the option where they
 // contradict each other or one is missing.
+// A distribution stands in it with its median; throws where one is given without --draws.
 WedgeCase wedge_case(const WedgeOptions& options);
+
+// The case with the distributions that the options give.
+WedgeSimulation uncertain_wedge(const WedgeOptions& options);
 
 // Nothing without --target.
 std::optional<WedgeTarget> wedge_target(const WedgeOptions& options);

@@ -139,6 +139,26 @@ TEST(CmdWedge, VaryAndSolve) {
   EXPECT_TRUE(has(none.out, "No water-fill from 0 to 1 brings the factor of safety to 90."));
 }
 
+TEST(CmdWedge, DrawsAreTheSameForAnyThreads) {
+  const Words draws{"--friction",   "normal(30,3)", "--cohesion",  "uniform(0,40)",
+                    "--fisher-k1",  "80",           "--fisher-k2", "60",
+                    "--water-fill", "uniform(0,1)", "--draws",     "20000",
+                    "--target",     "1.3",          "--json",      "--threads"};
+  Words one = draws, seven = draws;
+  one.push_back("1");
+  seven.push_back("7");
+  const Outcome first = wedge(one);
+  ASSERT_EQ(first.status, 0) << first.err;
+  EXPECT_EQ(first.out, wedge(seven).out);
+  const auto r = nlohmann::json::parse(first.out)["result"]["simulation"];
+  EXPECT_EQ(r["draws"], 20000);
+  EXPECT_NEAR(r["fails"]["value"].get<double>(),
+              r["forms"]["value"].get<double>() * r["below_one"]["value"].get<double>(), 1e-12);
+  EXPECT_GT(r["below_target"]["value"].get<double>(), r["below_one"]["value"].get<double>());
+  EXPECT_EQ(nlohmann::json::parse(first.out)["inputs"]["simulation"]["friction1_deg"],
+            "normal(30, 3)");
+}
+
 struct BadLine {
   Words more;
   std::string names;
@@ -169,6 +189,12 @@ TEST(CmdWedge, RefusesContradictionsAndGaps) {
       {{"--friction", "30", "--vary", "bolt-force=2..3"}, "bolt-force"},
       {{"--friction", "30", "--solve", "friction"}, "--solve"},
       {{"--friction", "30", "-o", "x.csv"}, "--output"},
+      {{"--friction", "normal(30,3)"}, "--friction: is a distribution"},
+      {{"--friction", "normal(30,3", "--draws", "10"}, "--friction"},
+      {{"--friction", "30", "--cohesion", "normal(5,5)", "--draws", "10"}, "too small"},
+      {{"--friction", "30", "--fisher-k1", "50"}, "--fisher-k1"},
+      {{"--friction", "30", "--draws", "0"}, "--draws"},
+      {{"--friction", "30", "--draws", "10", "--correlation", "2"}, "--correlation"},
       {{"--friction", "30", "--load", "-10@20/30"}, "--load"},
       {{"--friction", "30", "--bolt-action", "fixed"}, "--bolt-action"},
   };

@@ -112,8 +112,8 @@ Object block_object(const WedgeResult& r) {
 
 }  // namespace
 
-Value wedge_inputs(const WedgeCase& w, const WedgeResult& result,
-                   const std::optional<WedgeTarget>& target) {
+Object wedge_inputs(const WedgeCase& w, const WedgeResult& result,
+                    const std::optional<WedgeTarget>& target) {
   const WedgeGeometry& g = w.geometry;
   return Object{{"plane1", plane_value(g.plane1)},
                 {"plane2", plane_value(g.plane2)},

@@ -7,8 +7,8 @@
 namespace brink {
 
 // Every value that went in, defaults too.
-Value wedge_inputs(const WedgeCase& wedge, const WedgeResult& result,
-                   const std::optional<WedgeTarget>& target = {});
+Object wedge_inputs(const WedgeCase& wedge, const WedgeResult& result,
+                    const std::optional<WedgeTarget>& target = {});
 
 // Every key is always there; what does not exist (a wedge that does not form has no volume, a block
 // that lifts no driving force, a target that no bolt reaches no force) is null.
