@@ -12,6 +12,7 @@
 #include "input.hpp"
 #include "kinematics_text.hpp"
 #include "options.hpp"
+#include "site_tests.hpp"
 
 namespace brink::cli {
 
@@ -22,22 +23,25 @@ struct KinematicsRun {
   KinematicsOptions tests;
   OutputOptions output;
   bool no_sets = false;
+  Typed typed;
 };
 
-SetsResult sets_of(const Readings& readings, const KinematicsRun& run) {
+SetsResult sets_of(const Readings& readings, const KinematicsRun& run,
+                   const std::optional<Site>& site) {
   if (run.no_sets) {
     SetsResult none;
     none.assignment.assign(readings.size(), 0);
     none.unassigned = readings.size();
     return none;
   }
-  if (!run.input.set_column.empty()) return sets_by_column(readings, run.input.set_column);
-  return find_sets(readings, {std::nullopt, run.tests.seed, run.tests.threads});
+  return sets_with_site(readings, run.input.set_column,
+                        {std::nullopt, run.tests.seed, run.tests.threads}, site);
 }
 
-Value inputs_value(const Readings& readings, const KinematicsRun& run) {
-  Object inputs = input_record(readings, run.input);
-  const Object tests = kinematics_inputs(run.tests);
+Value inputs_value(const Readings& readings, const KinematicsRun& run,
+                   const KinematicsOptions& options, const std::optional<Site>& site) {
+  Object inputs = input_record(readings, run.input, site);
+  const Object tests = kinematics_inputs(options);
   for (const auto& [key, value] : tests.members()) inputs.add(key, value);
   inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
   inputs.add("find_sets", !run.no_sets && run.input.set_column.empty());
@@ -50,18 +54,21 @@ int run_kinematics(const std::vector<std::string>& files, const KinematicsRun& r
     throw Error(ErrorKind::argument, Place{.file = {}, .key = "--no-sets"},
                 "is given together with --set-column", {}, "one of the two");
   }
-  const Readings readings = load_readings(files, run.input, run.output, streams);
+  const std::optional<Site> site = load_site(files, run.input);
+  const std::vector<KinematicsOptions> tests = tests_with_site(run.tests, run.typed, site);
+  require_face_and_friction(tests, run.typed, site);
+  const Readings readings = load_readings(files, run.input, run.output, streams, 20, site);
   if (readings.size() == 0) require_usable(readings, run.input);
-  const SetsResult sets = sets_of(readings, run);
-  const KinematicsResult result =
-      test_kinematics(readings, sets.assignment, sets.sets.size(), run.tests);
+  const SetsResult sets = sets_of(readings, run, site);
+  const KinematicsResult result = run_tests(readings, sets, tests);
   std::vector<std::string> warnings = sets.warnings;
   warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
   print_warnings(warnings, run.output, streams);
   if (run.output.json) {
     warnings.insert(warnings.begin(), readings.warnings.begin(), readings.warnings.end());
-    streams.out << to_json(result_document("kinematics", inputs_value(readings, run), warnings,
-                                           kinematics_result(result, sets)));
+    streams.out << to_json(result_document("kinematics",
+                                           inputs_value(readings, run, result.options, site),
+                                           warnings, kinematics_result(result, sets)));
   } else {
     streams.out << kinematics_text(result, sets, readings.weights);
   }
@@ -98,7 +105,8 @@ Command kinematics_command() {
       "for each pair of sets, with an interval that shows how far they could have come out "
       "otherwise had other joints been logged.";
   command.positionals = Positionals::files;
-  add_kinematic_options(command.options, run->tests);
+  add_kinematic_options(command.options, run->tests, false);
+  note_typed(command.options, run->typed);
   add_input_options(command.options, run->input);
   command.options.push_back(set_column_option(run->input));
   command.options.push_back(flag_option(

@@ -10,6 +10,7 @@
 #include "input.hpp"
 #include "output_file.hpp"
 #include "sets_text.hpp"
+#include "site_tests.hpp"
 
 namespace brink::cli {
 
@@ -63,8 +64,8 @@ void check(const SetsRun& run) {
   if (run.output.output != "-") known_ending("-o", run.output.output, {".csv"});
 }
 
-Value inputs_value(const Readings& readings, const SetsRun& run) {
-  Object inputs = input_record(readings, run.input);
+Value inputs_value(const Readings& readings, const SetsRun& run, const std::optional<Site>& site) {
+  Object inputs = input_record(readings, run.input, site);
   const Object asked = sets_inputs(run.find);
   for (const auto& [key, value] : asked.members()) inputs.add(key, value);
   inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
@@ -72,12 +73,12 @@ Value inputs_value(const Readings& readings, const SetsRun& run) {
 }
 
 void print(const Readings& readings, const SetsResult& result, const SetsRun& run,
-           Streams& streams) {
+           const std::optional<Site>& site, Streams& streams) {
   if (run.output.json) {
     std::vector<std::string> warnings = readings.warnings;
     warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
     streams.out << to_json(
-        result_document("sets", inputs_value(readings, run), warnings, sets_result(result)));
+        result_document("sets", inputs_value(readings, run, site), warnings, sets_result(result)));
   } else if (run.output.output != "-") {
     streams.out << sets_text(result, readings);
   }
@@ -85,19 +86,18 @@ void print(const Readings& readings, const SetsResult& result, const SetsRun& ru
 
 int run_sets(const std::vector<std::string>& files, const SetsRun& run, Streams& streams) {
   check(run);
-  const Readings readings = load_readings(files, run.input, run.output, streams);
+  const std::optional<Site> site = load_site(files, run.input);
+  const Readings readings = load_readings(files, run.input, run.output, streams, 20, site);
   SetsResult result;
   if (readings.size() > 0) {
-    result = run.input.set_column.empty()
-                 ? find_sets(readings, run.find)
-                 : sets_by_column(readings, run.input.set_column, run.find);
+    result = sets_with_site(readings, run.input.set_column, run.find, site);
   }
   print_warnings(result.warnings, run.output, streams);
   if (!run.output.output.empty() && readings.size() > 0) {
     write_output(run.output.output, readings_csv(with_set_column(readings, result), {}),
-                 streams.out, files);
+                 streams.out, files_read(files, site));
   }
-  if (readings.size() > 0 || run.output.json) print(readings, result, run, streams);
+  if (readings.size() > 0 || run.output.json) print(readings, result, run, site, streams);
   require_usable(readings, run.input);
   return kDone;
 }

@@ -11,12 +11,12 @@
 #include "brink/plot/cairo_painter.hpp"
 #include "brink/plot/sheet.hpp"
 #include "brink/record/kinematics_document.hpp"
-#include "brink/record/readings_document.hpp"
 #include "brink/record/stereonet_document.hpp"
 #include "commands.hpp"
 #include "exit_status.hpp"
 #include "input.hpp"
 #include "output_file.hpp"
+#include "site_tests.hpp"
 #include "source_date.hpp"
 
 namespace brink::cli {
@@ -29,7 +29,7 @@ struct StereonetRun {
   InputOptions input;
   KinematicsOptions tests;
   OutputOptions output;
-  bool friction_given = false;
+  Typed typed;
   bool no_sets = false;
   std::optional<std::size_t> set_count;
   Projection projection = Projection::equal_angle;
@@ -99,15 +99,8 @@ Option count_option(StereonetRun& run) {
   return option;
 }
 
-void note_friction(std::vector<Option>& options, StereonetRun& run) {
-  for (Option& option : options) {
-    if (option.name != "--friction") continue;
-    option.help += " With it and --face, a small net for each mode is drawn.";
-    option.take = [&run, take = option.take](std::string_view text) {
-      take(text);
-      run.friction_given = true;
-    };
-  }
+bool friction_typed(const StereonetRun& run) {
+  return run.typed.contains("--friction");
 }
 
 void check_options(const StereonetRun& run) {
@@ -116,7 +109,7 @@ void check_options(const StereonetRun& run) {
                 "a file ending in .svg, .pdf or .png");
   }
   known_ending("-o", run.output.output, {".svg", ".pdf", ".png"});
-  if (run.friction_given && run.tests.faces.empty()) {
+  if (friction_typed(run) && run.tests.faces.empty() && run.input.site_file.empty()) {
     throw Error(ErrorKind::argument, Place{.key = "--friction"}, "is given without a face", {},
                 "--face DIP/DIR as well");
   }
@@ -128,15 +121,16 @@ void check_options(const StereonetRun& run) {
   }
 }
 
-SetsResult sets_of(const Readings& readings, const StereonetRun& run) {
+SetsResult sets_of(const Readings& readings, const StereonetRun& run,
+                   const std::optional<Site>& site) {
   if (run.no_sets) {
     SetsResult none;
     none.assignment.assign(readings.size(), 0);
     none.unassigned = readings.size();
     return none;
   }
-  if (!run.input.set_column.empty()) return sets_by_column(readings, run.input.set_column);
-  return find_sets(readings, {run.set_count, run.tests.seed, run.tests.threads});
+  return sets_with_site(readings, run.input.set_column,
+                        {run.set_count, run.tests.seed, run.tests.threads}, site);
 }
 
 // Everything the drawing shows.
@@ -145,34 +139,47 @@ struct Shown {
   SetsResult sets;
   std::optional<DensityGrid> density;
   std::vector<double> levels;
+  std::vector<Face> faces;
+  std::vector<KinematicsOptions> tests;
   std::optional<KinematicsResult> kinematics;
 };
 
-Shown work_out(Readings readings, const StereonetRun& run) {
-  Shown shown{std::move(readings), {}, {}, {}, {}};
-  shown.sets = sets_of(shown.readings, run);
+// With a face and a friction angle the modes are tested too.
+bool tests_wanted(const std::vector<KinematicsOptions>& tests, const StereonetRun& run,
+                  const std::optional<Site>& site) {
+  if (tests.empty() || tests.front().faces.empty()) return false;
+  return friction_typed(run) || (site && kinematic_friction(*site));
+}
+
+Shown work_out(Readings readings, const StereonetRun& run, const std::optional<Site>& site) {
+  Shown shown{std::move(readings), {}, {}, {}, {}, {}, {}};
+  shown.sets = sets_of(shown.readings, run, site);
+  shown.tests = tests_with_site(run.tests, run.typed, site);
+  for (const KinematicsOptions& test : shown.tests) {
+    shown.faces.insert(shown.faces.end(), test.faces.begin(), test.faces.end());
+  }
   if (run.contours) {
     const AxialDensity density(shown.readings.normals, shown.readings.weights, run.kernel);
     shown.density = density_grid(density, kDensityRings, run.tests.threads);
     shown.levels = run.levels.empty() ? usual_levels(shown.density->peak) : run.levels;
   }
-  if (run.friction_given) {
-    shown.kinematics =
-        test_kinematics(shown.readings, shown.sets.assignment, shown.sets.sets.size(), run.tests);
+  if (tests_wanted(shown.tests, run, site)) {
+    shown.kinematics = run_tests(shown.readings, shown.sets, shown.tests);
   }
   return shown;
 }
 
 std::vector<plot::Picture> pages_of(const Shown& shown, const StereonetRun& run) {
-  plot::NetContent content{
-      shown.readings, shown.sets,      shown.density ? &*shown.density : nullptr,
-      shown.levels,   run.tests.faces, {}};
+  plot::NetContent content{shown.readings, shown.sets,  shown.density ? &*shown.density : nullptr,
+                           shown.levels,   shown.faces, {}};
   const plot::SheetText text{run.title, {}};
   if (!shown.kinematics) return {plot::net_sheet(content, run.projection, text)};
   std::vector<plot::Picture> pages;
-  for (std::size_t face = 0; face < run.tests.faces.size(); ++face) {
+  KinematicsResult kinematics = *shown.kinematics;
+  for (std::size_t face = 0; face < shown.faces.size(); ++face) {
+    kinematics.options.upper = kinematics.faces[face].upper;
     content.marked_face = face;
-    pages.push_back(plot::face_sheet(content, run.projection, text, *shown.kinematics, face));
+    pages.push_back(plot::face_sheet(content, run.projection, text, kinematics, face));
   }
   return pages;
 }
@@ -183,11 +190,11 @@ plot::Painted painted(const std::vector<plot::Picture>& pages, const std::string
   return ending == ".svg" ? plot::paint_svg(one) : plot::paint_png(one);
 }
 
-Value inputs_value(const Readings& readings, const StereonetRun& run) {
-  Object inputs = readings_inputs(readings, run.input.reading);
-  const Object tests = kinematics_inputs(run.tests);
+Value inputs_value(const Shown& shown, const StereonetRun& run, const std::optional<Site>& site) {
+  Object inputs = input_record(shown.readings, run.input, site);
+  const Object tests = kinematics_inputs(shown.kinematics ? shown.kinematics->options : run.tests);
   for (const auto& [key, value] : tests.members()) {
-    inputs.add(key, key == "friction_deg" && !run.friction_given ? Value() : value);
+    inputs.add(key, key == "friction_deg" && !shown.kinematics ? Value() : value);
   }
   inputs.add("set_column", run.input.set_column.empty() ? Value() : Value(run.input.set_column));
   inputs.add("find_sets", !run.no_sets && run.input.set_column.empty());
@@ -218,9 +225,10 @@ std::string drawn_text(const Shown& shown, const StereonetRun& run, std::size_t 
 int run_stereonet(const std::vector<std::string>& files, const StereonetRun& run,
                   Streams& streams) {
   check_options(run);
-  Readings readings = load_readings(files, run.input, run.output, streams);
+  const std::optional<Site> site = load_site(files, run.input);
+  Readings readings = load_readings(files, run.input, run.output, streams, 20, site);
   if (readings.size() == 0) require_usable(readings, run.input);
-  const Shown shown = work_out(std::move(readings), run);
+  const Shown shown = work_out(std::move(readings), run, site);
   const auto pages = pages_of(shown, run);
   const std::string ending = known_ending("-o", run.output.output, {".svg", ".pdf", ".png"});
   const plot::Painted file = painted(pages, ending);
@@ -231,12 +239,12 @@ int run_stereonet(const std::vector<std::string>& files, const StereonetRun& run
   }
   warnings.insert(warnings.end(), file.warnings.begin(), file.warnings.end());
   print_warnings(warnings, run.output, streams);
-  write_file(run.output.output, file.bytes, files);
+  write_file(run.output.output, file.bytes, files_read(files, site));
   if (run.output.json) {
     const auto& before = shown.readings.warnings;
     warnings.insert(warnings.begin(), before.begin(), before.end());
     streams.out << to_json(
-        result_document("stereonet", inputs_value(shown.readings, run), warnings,
+        result_document("stereonet", inputs_value(shown, run, site), warnings,
                         stereonet_result({run.output.output, pages.size(), pages.front().width_mm,
                                           pages.front().height_mm, shown.readings, shown.sets,
                                           shown.density ? &*shown.density : nullptr, shown.levels,
@@ -276,7 +284,7 @@ Command stereonet_command() {
   command.positionals = Positionals::files;
   add_drawing_options(command.options, *run);
   add_kinematic_options(command.options, run->tests, false);
-  note_friction(command.options, *run);
+  note_typed(command.options, run->typed);
   add_input_options(command.options, run->input);
   command.options.push_back(set_column_option(run->input));
   command.options.push_back(count_option(*run));

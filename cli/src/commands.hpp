@@ -19,8 +19,9 @@ Command report_command();
 
 // In the order of the help. A command joins the list when it works.
 inline std::vector<Command> all_commands() {
-  return {readings_command(), sets_command(),  kinematics_command(), stereonet_command(),
-          steepest_command(), wedge_command(), plane_command(),      topple_command()};
+  return {readings_command(),  sets_command(),     kinematics_command(),
+          stereonet_command(), steepest_command(), wedge_command(),
+          plane_command(),     topple_command(),   report_command()};
 }
 
 }  // namespace brink::cli

@@ -63,29 +63,6 @@ struct ModeRow {
   bool pairs;
 };
 
-std::string mode_table(const FaceKinematics& face, const SetsResult& sets, bool weighted) {
-  std::vector<TextTable::Column> columns{{"mode", Align::left}, {"of"},       {"tested"},
-                                         {"admissible"},        {"share, %"}, {"95 % interval, %"}};
-  if (weighted) columns.push_back({"by weight, %"});
-  columns.push_back({"led by", Align::left});
-  TextTable table(std::move(columns));
-  for (const ModeRow& row : {ModeRow{"planar sliding", face.planar_sliding, false},
-                             ModeRow{"wedge sliding", face.wedge_sliding, true},
-                             ModeRow{"flexural toppling", face.flexural_toppling, false},
-                             ModeRow{"block toppling", face.block_toppling, true}}) {
-    std::vector<std::string> cells{row.name,
-                                   row.pairs ? "pairs" : "readings",
-                                   grouped(row.mode.tested),
-                                   grouped(row.mode.admissible),
-                                   percent(row.mode.share),
-                                   interval(row.mode)};
-    if (weighted) cells.push_back(percent(row.mode.weighted_share));
-    cells.push_back(leaders(row.mode, row.pairs, sets));
-    table.add_row(std::move(cells));
-  }
-  return table.text();
-}
-
 std::string notes(const FaceKinematics& face) {
   std::string text = fmt::format(
       "Of the pairs that daylight, {} a factor of safety below 1 under friction alone, dry, the "
@@ -115,8 +92,8 @@ std::string face_text(const FaceKinematics& face, const KinematicsResult& result
   std::string text = fmt::format("Face {}, friction {} degrees",
                                  orientation(face.face.dip, face.face.dip_direction),
                                  shortest(options.friction.deg()));
-  if (options.upper.dip.deg() > 0.0) {
-    text += ", upper ground " + orientation(options.upper.dip, options.upper.dip_direction);
+  if (face.upper.dip.deg() > 0.0) {
+    text += ", upper ground " + orientation(face.upper.dip, face.upper.dip_direction);
   }
   return text + "\n\n" + mode_table(face, sets, weighted) + '\n' + notes(face) + '\n';
 }
@@ -134,10 +111,36 @@ std::string set_list(const SetsResult& sets) {
 
 }  // namespace
 
+std::string mode_table(const FaceKinematics& face, const SetsResult& sets, bool weighted) {
+  std::vector<TextTable::Column> columns{{"mode", Align::left}, {"of"},       {"tested"},
+                                         {"admissible"},        {"share, %"}, {"95 % interval, %"}};
+  if (weighted) columns.push_back({"by weight, %"});
+  columns.push_back({"led by", Align::left});
+  TextTable table(std::move(columns));
+  for (const ModeRow& row : {ModeRow{"planar sliding", face.planar_sliding, false},
+                             ModeRow{"wedge sliding", face.wedge_sliding, true},
+                             ModeRow{"flexural toppling", face.flexural_toppling, false},
+                             ModeRow{"block toppling", face.block_toppling, true}}) {
+    std::vector<std::string> cells{row.name,
+                                   row.pairs ? "pairs" : "readings",
+                                   grouped(row.mode.tested),
+                                   grouped(row.mode.admissible),
+                                   percent(row.mode.share),
+                                   interval(row.mode)};
+    if (weighted) cells.push_back(percent(row.mode.weighted_share));
+    cells.push_back(leaders(row.mode, row.pairs, sets));
+    table.add_row(std::move(cells));
+  }
+  return table.text();
+}
+
+bool weights_differ(std::span<const double> weights) {
+  return std::adjacent_find(weights.begin(), weights.end(), std::not_equal_to<>()) != weights.end();
+}
+
 std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets,
                             std::span<const double> weights) {
-  const bool weighted =
-      std::adjacent_find(weights.begin(), weights.end(), std::not_equal_to<>()) != weights.end();
+  const bool weighted = weights_differ(weights);
   std::string text = set_list(sets);
   if (weighted) {
     text +=

@@ -14,4 +14,10 @@ namespace brink::cli {
 std::string kinematics_text(const KinematicsResult& result, const SetsResult& sets,
                             std::span<const double> weights);
 
+// The table of one face's modes; `weighted`: with shares by weight.
+std::string mode_table(const FaceKinematics& face, const SetsResult& sets, bool weighted);
+
+// Whether the weights differ.
+bool weights_differ(std::span<const double> weights);
+
 }  // namespace brink::cli

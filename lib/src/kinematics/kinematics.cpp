@@ -158,6 +158,7 @@ FaceKinematics test_face(const PairReadings& readings, const ChordCounter& pairs
   const PairTally block = pairs.block_toppling(limits, options.threads);
   FaceKinematics result;
   result.face = face;
+  result.upper = options.upper;
   result.planar_sliding = plane_mode(readings, planes.sliding);
   result.flexural_toppling = plane_mode(readings, planes.flexural);
   result.wedge_sliding = pair_mode(readings, lines, wedge);

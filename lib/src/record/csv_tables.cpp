@@ -8,6 +8,7 @@
 
 #include "brink/base/number.hpp"
 #include "brink/record/job.hpp"
+#include "brink/record/kinematics_document.hpp"
 
 namespace brink {
 
@@ -25,10 +26,6 @@ std::string quoted(std::string_view text) {
   return result + '"';
 }
 
-std::string set_name(const SetsResult& sets, int number) {
-  return number > 0 ? sets.sets.at(static_cast<std::size_t>(number) - 1).name : std::string();
-}
-
 std::optional<double> degrees(const std::optional<Angle>& angle) {
   if (!angle) return {};
   return angle->deg();
@@ -40,17 +37,6 @@ const char* yes_or_no(bool value) {
 
 const char* target_cell(const std::optional<bool>& met) {
   return met ? yes_or_no(*met) : "";
-}
-
-std::vector<std::string> readings_headings(const Readings& readings) {
-  std::vector<std::string> headings{"file",   "line",       "dip_deg", "dip_direction_deg",
-                                    "weight", "set_number", "set_name"};
-  const std::vector<std::string> ours = headings;
-  for (const ExtraColumn& column : readings.extra) {
-    const bool taken = std::find(ours.begin(), ours.end(), column.heading) != ours.end();
-    headings.push_back(taken ? column.heading + "_read" : column.heading);
-  }
-  return headings;
 }
 
 void add_mode(CsvTable& table, const Job& job, const FaceJob& face, const char* name,
@@ -66,9 +52,8 @@ void add_mode(CsvTable& table, const Job& job, const FaceJob& face, const char* 
   start("all", pairs ? "all" : "");
   table.whole(mode.tested).whole(mode.admissible).cell(mode.share).cell(mode.weighted_share);
   table.cell(mode.share_low).cell(mode.share_high).end_row();
-  const auto name_of = [&](int set) { return set > 0 ? set_name(job.sets, set) : "none"; };
   for (const SetCount& count : mode.by_set) {
-    start(name_of(count.set_a), pairs ? name_of(count.set_b) : "");
+    start(set_name(job.sets, count.set_a), pairs ? set_name(job.sets, count.set_b) : "");
     table.whole(count.tested).whole(count.admissible);
     table.cell(static_cast<double>(count.admissible) / static_cast<double>(count.tested));
     table.cell(count.admissible_weight / count.tested_weight).cell("").cell("").end_row();
@@ -113,23 +98,6 @@ void CsvTable::end_row() {
   if (cells_ != columns_) throw std::logic_error("a CSV row of the wrong length");
   cells_ = 0;
   text_ += '\n';
-}
-
-std::string assigned_readings_csv(const Readings& readings, const SetsResult& sets) {
-  CsvTable table(readings_headings(readings));
-  for (std::size_t i = 0; i < readings.size(); ++i) {
-    const int set = i < sets.assignment.size() ? sets.assignment[i] : 0;
-    table.cell(readings.files.at(readings.places[i].file).name)
-        .whole(readings.places[i].line)
-        .cell(readings.planes[i].dip.deg())
-        .cell(readings.planes[i].dip_direction.deg())
-        .cell(readings.weights[i])
-        .whole(static_cast<std::uint64_t>(set))
-        .cell(set_name(sets, set));
-    for (const ExtraColumn& column : readings.extra) table.cell(column.cells[i]);
-    table.end_row();
-  }
-  return table.text();
 }
 
 std::string sets_csv(const SetsResult& sets) {

@@ -18,18 +18,6 @@ Error site_error(const Site& site, std::string key, std::string_view what,
   return Error(ErrorKind::input, Place{site.source.name, 0, 0, std::move(key)}, what, {}, accepted);
 }
 
-SetsResult sets_of(const Site& site, const Readings& readings, const JobOptions& options) {
-  if (!site.sets.column) {
-    return find_sets(readings, {site.sets.count, options.seed, options.threads});
-  }
-  if (readings.find_column(*site.sets.column) == nullptr) {
-    throw site_error(site, "sets.column",
-                     fmt::format("'{}' is not a column of the readings", *site.sets.column),
-                     "the heading of a column that names the set of each reading");
-  }
-  return sets_by_column(readings, *site.sets.column);
-}
-
 // Strength of every set: its own, or that of [strength]; nothing where the site file has neither.
 using Strengths = std::vector<std::optional<MohrCoulomb>>;
 
@@ -195,8 +183,10 @@ Job run_job(Site site, Readings readings, const JobOptions& options) {
                      "friction_deg in [strength] or in [kinematics]");
   }
   Job job{std::move(site), options, *friction, std::move(readings), {}, {}, {}};
-  job.sets = sets_of(job.site, job.readings, options);
-  const Strengths strengths = strengths_of(job.site, name_sets(job.sets, job.site.sets));
+  NamedSets named =
+      sets_of_site(job.site, job.readings, {std::nullopt, options.seed, options.threads});
+  job.sets = std::move(named.sets);
+  const Strengths strengths = strengths_of(job.site, named.known);
   job.warnings = job.readings.warnings;
   job.warnings.insert(job.warnings.end(), job.sets.warnings.begin(), job.sets.warnings.end());
   for (const SiteFace& site_face : job.site.faces) {

@@ -34,7 +34,13 @@ Object mode_object(const ModeCount& mode, bool pairs, const SetsResult& sets) {
                 {"by_set", std::move(by_set)}};
 }
 
-Value face_kinematics_value(const FaceKinematics& face, Angle friction, const SetsResult& sets) {
+}  // namespace
+
+std::string set_name(const SetsResult& sets, int number) {
+  return number > 0 ? sets.sets.at(static_cast<std::size_t>(number) - 1).name : kNoSet;
+}
+
+Object face_kinematics_value(const FaceKinematics& face, Angle friction, const SetsResult& sets) {
   Object wedge = mode_object(face.wedge_sliding, true, sets);
   wedge.add("parallel_pairs", face.parallel_pairs);
   wedge.add("unstable_dry", face.unstable_dry);
@@ -50,14 +56,9 @@ Value face_kinematics_value(const FaceKinematics& face, Angle friction, const Se
                {"flexural_toppling", mode_object(face.flexural_toppling, false, sets)},
                {"block_toppling", std::move(block)}};
   return Object{{"face", face_value(face.face)},
+                {"upper", plane_value(face.upper)},
                 {"friction_deg", friction.deg()},
                 {"modes", std::move(modes)}};
-}
-
-}  // namespace
-
-std::string set_name(const SetsResult& sets, int number) {
-  return number > 0 ? sets.sets.at(static_cast<std::size_t>(number) - 1).name : kNoSet;
 }
 
 Object kinematics_inputs(const KinematicsOptions& options) {

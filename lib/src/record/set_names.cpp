@@ -4,6 +4,7 @@
 
 #include <algorithm>
 
+#include "brink/base/error.hpp"
 #include "brink/base/ties.hpp"
 #include "brink/orientation/intersection.hpp"
 
@@ -91,6 +92,23 @@ std::vector<std::optional<std::size_t>> name_sets(SetsResult& sets, const SiteSe
                           known.name, known.line, kFarthestNamed.deg()));
   }
   return matches;
+}
+
+NamedSets sets_of_site(const Site& site, const Readings& readings, FindSetsOptions options) {
+  NamedSets result;
+  if (site.sets.column) {
+    if (readings.find_column(*site.sets.column) == nullptr) {
+      throw Error(ErrorKind::input, Place{.file = site.source.name, .key = "sets.column"},
+                  "is not a column of the readings", *site.sets.column,
+                  "the heading of a column that names the set of each reading");
+    }
+    result.sets = sets_by_column(readings, *site.sets.column, options);
+  } else {
+    if (site.sets.count) options.count = site.sets.count;
+    result.sets = find_sets(readings, options);
+  }
+  result.known = name_sets(result.sets, site.sets);
+  return result;
 }
 
 }  // namespace brink

@@ -51,6 +51,7 @@ struct ModeCount {
 
 struct FaceKinematics {
   Face face;
+  Plane upper = kLevelGround;  // the ground above that it was tested with
   ModeCount planar_sliding;
   ModeCount wedge_sliding;
   ModeCount flexural_toppling;

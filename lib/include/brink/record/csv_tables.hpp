@@ -8,8 +8,6 @@
 #include <string_view>
 #include <vector>
 
-#include "brink/kinematics/kinematics.hpp"
-#include "brink/readings/readings.hpp"
 #include "brink/sets/sets.hpp"
 
 namespace brink {
@@ -35,11 +33,6 @@ class CsvTable {
   std::size_t cells_ = 0;  // of the row in the making
   std::string text_;
 };
-
-// One row a reading: where it stood, dip_deg, dip_direction_deg, weight, the set's number (0: none)
-// and name, then the columns that travelled along under their own headings (a heading of ours gets
-// "_read" behind it).
-std::string assigned_readings_csv(const Readings& readings, const SetsResult& sets);
 
 // One row a set.
 std::string sets_csv(const SetsResult& sets);

@@ -20,7 +20,10 @@ std::string set_name(const SetsResult& sets, int number);
 // toppling_tolerance_deg, pairs, seed}. Commands add where readings and sets came from.
 Object kinematics_inputs(const KinematicsOptions& options);
 
-// {faces[] {face, friction_deg, modes {planar_sliding, wedge_sliding, flexural_toppling,
+// One entry of faces[] below.
+Object face_kinematics_value(const FaceKinematics& face, Angle friction, const SetsResult& sets);
+
+// {faces[] {face, upper, friction_deg, modes {planar_sliding, wedge_sliding, flexural_toppling,
 // block_toppling}}, sets[] {name, count, mean}}. A mode is {tested, admissible, share,
 // weighted_share, share_low, share_high, by_set[]}, an entry of by_set {set or sets[2], tested,
 // admissible, share, weighted_share}; the modes of pairs add parallel_pairs, wedge sliding

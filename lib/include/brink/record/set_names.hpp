@@ -20,4 +20,14 @@ inline constexpr Angle kFarthestNamed = Angle::degrees(30.0);
 // [[set]] that matches none gives a warning in `sets`.
 std::vector<std::optional<std::size_t>> name_sets(SetsResult& sets, const SiteSets& site_sets);
 
+struct NamedSets {
+  SetsResult sets;
+  std::vector<std::optional<std::size_t>> known;  // as name_sets() returns
+};
+
+// The sets of a site: as its column names them, or found, with its names. `options.count` is used
+// where the site has neither count nor column. Throws ErrorKind::input where the readings lack the
+// column.
+NamedSets sets_of_site(const Site& site, const Readings& readings, FindSetsOptions options);
+
 }  // namespace brink
