@@ -36,8 +36,14 @@ Text fitted(Point at, const std::string& words, TextStyle look, double width_mm)
   return text;
 }
 
-// Title, wrapped over two lines where it must be, and facts; returns the foot of both.
-double add_heading(Group& page, const SheetText& text, const std::string& facts, double width_mm) {
+std::string sheet_title(const SheetText& text) {
+  return text.title.empty() ? "Stereonet" : text.title;
+}
+
+}  // namespace
+
+double add_sheet_heading(Group& page, const SheetText& text, const std::string& facts,
+                         double width_mm) {
   Text title = fitted({kMargin_mm, 0.0}, text.title,
                       style::text(style::kTitle_mm, style::kInk, true), width_mm);
   title.most_lines = 2;
@@ -58,12 +64,6 @@ double add_heading(Group& page, const SheetText& text, const std::string& facts,
   add(page, words);
   return y + facts_size.height_mm - facts_size.ascent_mm;
 }
-
-std::string sheet_title(const SheetText& text) {
-  return text.title.empty() ? "Stereonet" : text.title;
-}
-
-}  // namespace
 
 std::string facts_in_words(const NetContent& content, Projection projection,
                            const KinematicsOptions* options, const Face* face) {
@@ -95,7 +95,7 @@ Picture net_sheet(const NetContent& content, Projection projection, const SheetT
   Group& page = picture.content;
   const double width = picture.width_mm - 2.0 * kMargin_mm;
   const double foot =
-      add_heading(page, text, facts_in_words(content, projection, nullptr, nullptr), width);
+      add_sheet_heading(page, text, facts_in_words(content, projection, nullptr, nullptr), width);
   const NetFrame frame{{105.0, foot + 12.0 + 72.0}, 72.0, projection};
   const double net_foot = frame.centre.y_mm + frame.radius_mm;
   add(page, draw_stereonet(content, frame, {23.0, 23.0, foot + 2.0, net_foot + 10.0}));
@@ -110,7 +110,7 @@ Picture face_sheet(const NetContent& content, Projection projection, const Sheet
   Group& page = picture.content;
   const double width = picture.width_mm - 2.0 * kMargin_mm;
   const FaceKinematics& tested = kinematics.faces[face];
-  const double foot = add_heading(
+  const double foot = add_sheet_heading(
       page, text, facts_in_words(content, projection, &kinematics.options, &tested.face), width);
   const NetFrame frame{{91.5, 106.0}, 61.0, projection};
   add(page, draw_stereonet(content, frame, {22.0, 21.0, foot + 1.0, 177.0}));

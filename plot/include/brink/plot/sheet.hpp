@@ -20,6 +20,11 @@ struct SheetText {
 std::string facts_in_words(const NetContent& content, Projection projection,
                            const KinematicsOptions* options, const Face* face);
 
+// Title, wrapped over two lines where it must be, and facts at the top of a page; returns the foot
+// of both.
+double add_sheet_heading(Group& page, const SheetText& text, const std::string& facts,
+                         double width_mm);
+
 // Upright, as wide as A4: title, facts, the net and its key.
 Picture net_sheet(const NetContent& content, Projection projection, const SheetText& text);
 
