@@ -11,6 +11,7 @@
 #include "output_file.hpp"
 #include "sets_text.hpp"
 #include "site_tests.hpp"
+#include "spacing_text.hpp"
 
 namespace brink::cli {
 
@@ -72,16 +73,21 @@ Value inputs_value(const Readings& readings, const SetsRun& run, const std::opti
   return inputs;
 }
 
-void print(const Readings& readings, const SetsResult& result, const SetsRun& run,
-           const std::optional<Site>& site, Streams& streams) {
-  if (run.output.json) {
-    std::vector<std::string> warnings = readings.warnings;
-    warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
-    streams.out << to_json(
-        result_document("sets", inputs_value(readings, run, site), warnings, sets_result(result)));
-  } else if (run.output.output != "-") {
-    streams.out << sets_text(result, readings);
+// Spacing, persistence and aperture, where the readings have columns for them.
+JointLengths lengths_of(const Readings& readings, const SetsResult& sets,
+                        const BiasOptions& traverses) {
+  std::vector<SetPlane> planes;
+  for (const SetStatistics& set : sets.sets) {
+    planes.push_back({set.name, upward_normal(set.mean)});
   }
+  return measure_joints(readings, sets.assignment, planes, traverses);
+}
+
+std::string text_of(const Readings& readings, const SetsResult& sets, const JointLengths& lengths) {
+  std::vector<std::string> names;
+  for (const SetStatistics& set : sets.sets) names.push_back(set.name);
+  const std::string measured = spacing_text(lengths, names);
+  return sets_text(sets, readings) + (measured.empty() ? "" : "\n") + measured;
 }
 
 int run_sets(const std::vector<std::string>& files, const SetsRun& run, Streams& streams) {
@@ -89,15 +95,26 @@ int run_sets(const std::vector<std::string>& files, const SetsRun& run, Streams&
   const std::optional<Site> site = load_site(files, run.input);
   const Readings readings = load_readings(files, run.input, run.output, streams, 20, site);
   SetsResult result;
+  JointLengths lengths;
   if (readings.size() > 0) {
     result = sets_with_site(readings, run.input.set_column, run.find, site);
+    lengths = lengths_of(readings, result, site ? site->bias : run.input.bias);
   }
-  print_warnings(result.warnings, run.output, streams);
+  std::vector<std::string> warnings = result.warnings;
+  const std::vector<std::string>& more = lengths.spacing.warnings;
+  warnings.insert(warnings.end(), more.begin(), more.end());
+  print_warnings(warnings, run.output, streams);
   if (!run.output.output.empty() && readings.size() > 0) {
     write_output(run.output.output, readings_csv(with_set_column(readings, result), {}),
                  streams.out, files_read(files, site));
   }
-  if (readings.size() > 0 || run.output.json) print(readings, result, run, site, streams);
+  if (run.output.json) {
+    warnings.insert(warnings.begin(), readings.warnings.begin(), readings.warnings.end());
+    streams.out << to_json(result_document("sets", inputs_value(readings, run, site), warnings,
+                                           sets_result(result, lengths)));
+  } else if (readings.size() > 0 && run.output.output != "-") {
+    streams.out << text_of(readings, result, lengths);
+  }
   require_usable(readings, run.input);
   return kDone;
 }
@@ -113,7 +130,9 @@ Command sets_command() {
       "Divides the readings into sets and strays, as axes: a set that straddles the rim of the net "
       "is one set. The number of sets is the one with the least Bayesian criterion; round and "
       "elliptical sets compete. Every set gets its Fisher statistics, its 95 % cone and a test of "
-      "how well a Fisher distribution fits.";
+      "how well a Fisher distribution fits. Where a column gives positions along scanlines or "
+      "boreholes (--traverse), the true spacing of each set and an estimate of RQD follow; columns "
+      "of persistence (or trace length) and aperture are described too.";
   command.positionals = Positionals::files;
   command.options.push_back(count_option(*run));
   command.options.push_back(set_column_option(run->input));

@@ -74,7 +74,7 @@ TEST(CmdKinematics, CountsBySetAndPairOfSets) {
 }
 
 TEST(CmdKinematics, TextNamesLeadingSetsAndCautions) {
-  const Outcome outcome = kinematics({"--set-column", "set", "--face", "60/180"});
+  const Outcome outcome = kinematics({"--set-column", "set", "--face", "60/180", "--quiet"});
   EXPECT_EQ(outcome.status, 0) << outcome.err;
   EXPECT_EQ(outcome.err, "");
   EXPECT_TRUE(has(outcome.out, "Face 75/180, friction 30 degrees"));

@@ -3,6 +3,8 @@
 #include <string>
 #include <utility>
 
+#include "brink/record/spacing_document.hpp"
+
 namespace brink {
 
 namespace {
@@ -42,21 +44,7 @@ Array containment_value(const SetStatistics& set) {
   return cones;
 }
 
-}  // namespace
-
-std::string_view name_of(Shape shape) {
-  return shape == Shape::fisher ? "round" : "elliptical";
-}
-
-Object sets_inputs(const FindSetsOptions& options) {
-  Array shares;
-  for (const double share : options.containment_shares) shares.push_back(share);
-  return Object{{"count", options.count ? Value(std::uint64_t{*options.count}) : Value()},
-                {"containment_shares", std::move(shares)},
-                {"seed", options.seed}};
-}
-
-Value set_value(const SetStatistics& set) {
+Object set_object(const SetStatistics& set) {
   Array eigenvalues;
   Array planes;
   for (std::size_t k = 0; k < 3; ++k) {
@@ -83,9 +71,32 @@ Value set_value(const SetStatistics& set) {
                 {"shape", set.shape ? Value(name_of(*set.shape)) : Value()}};
 }
 
-Value sets_result(const SetsResult& result) {
+}  // namespace
+
+std::string_view name_of(Shape shape) {
+  return shape == Shape::fisher ? "round" : "elliptical";
+}
+
+Object sets_inputs(const FindSetsOptions& options) {
+  Array shares;
+  for (const double share : options.containment_shares) shares.push_back(share);
+  return Object{{"count", options.count ? Value(std::uint64_t{*options.count}) : Value()},
+                {"containment_shares", std::move(shares)},
+                {"seed", options.seed}};
+}
+
+Value set_value(const SetStatistics& set) {
+  return set_object(set);
+}
+
+Value sets_result(const SetsResult& result, const JointLengths& lengths) {
   Array sets;
-  for (const SetStatistics& set : result.sets) sets.push_back(set_value(set));
+  for (std::size_t s = 0; s < result.sets.size(); ++s) {
+    Object set = set_object(result.sets[s]);
+    const Object measured = joint_lengths_of_set(lengths, s);
+    for (const auto& [key, value] : measured.members()) set.add(key, value);
+    sets.push_back(std::move(set));
+  }
   Array assignment;
   for (const int set : result.assignment) assignment.push_back(set);
   Array tried;
@@ -98,7 +109,8 @@ Value sets_result(const SetsResult& result) {
                 {"counts_tried", std::move(tried)},
                 {"undecided", result.undecided},
                 {"runner_up", result.runner_up ? count_value(*result.runner_up) : Value()},
-                {"uniformity", uniformity_value(result.uniformity)}};
+                {"uniformity", uniformity_value(result.uniformity)},
+                {"traverses", traverse_frequencies(lengths.spacing)}};
 }
 
 Readings with_set_column(const Readings& readings, const SetsResult& result) {

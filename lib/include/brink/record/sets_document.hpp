@@ -1,6 +1,7 @@
 // Sets as a record, and readings with the set of each.
 #pragma once
 
+#include "brink/readings/spacing.hpp"
 #include "brink/record/document.hpp"
 #include "brink/sets/sets.hpp"
 
@@ -20,8 +21,9 @@ std::string_view name_of(Shape shape);
 Value set_value(const SetStatistics& set);
 
 // {sets[], unassigned, assignment[], log_likelihood, bic, counts_tried[] {count, bic}, undecided,
-// runner_up{count, bic}, uniformity{test, statistic, p_value}}.
-Value sets_result(const SetsResult& result);
+// runner_up{count, bic}, uniformity{test, statistic, p_value}, traverses[]}. Each set is
+// set_value() with the spacing, persistence and aperture of spacing_document.hpp.
+Value sets_result(const SetsResult& result, const JointLengths& lengths = {});
 
 // The readings with one more column, the name of each one's set ("" for none), under the first of
 // these headings that is free: "set", "found_set", "found_set_2" ...
