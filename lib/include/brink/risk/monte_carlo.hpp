@@ -40,8 +40,8 @@ struct WedgeSimulation {
   std::optional<Distribution> cohesion2;
   std::optional<Distribution> water_fill;  // 0 to 1
   std::optional<Distribution> seismic;     // horizontal, >= 0
-  double correlation = 0.0;  // between friction and cohesion of one plane, -1..1: that of the
-                             // normal scores (Gaussian copula)
+  double correlation = 0.0;     // between friction and cohesion of one plane, -1..1: that of the
+                                // normal scores (Gaussian copula)
   std::uint64_t draws = 10000;  // 1 to 10^8
   std::uint64_t seed = 1;
   unsigned threads = 0;
