@@ -179,7 +179,7 @@ Recipe draw_recipe(Family family, std::uint64_t seed) {
   Recipe recipe;
   recipe.family = family;
   recipe.readings = static_cast<std::size_t>(std::round(40.0 * std::pow(125.0, dice.uniform())));
-  recipe.sets = dice.whole(2, recipe.readings < 100 ? 3 : 6);
+  recipe.sets = dice.whole(2, recipe.readings < 100 ? 3 : recipe.readings < 300 ? 4 : 6);
   recipe.noise_share = dice.between(0.0, 0.3);
   recipe.at_rim = dice.uniform() < 0.5;
   recipe.whole_degrees = dice.uniform() < 0.5;

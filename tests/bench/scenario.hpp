@@ -31,7 +31,7 @@ struct Recipe {
   std::size_t readings = 300;
   std::size_t sets = 3;
   double noise_share = 0.1;
-  double least_apart_deg = 35.0;  // between set means, as axes
+  double least_apart_deg = 40.0;  // between set means, as axes
   bool at_rim = false;            // means of half of the sets within 10 degrees of vertical
   bool whole_degrees = false;
 };

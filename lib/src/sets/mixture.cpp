@@ -191,9 +191,13 @@ MixtureFit fit_mixture(const Mixture& start, const AxisSample& sample, const Fit
   }
 }
 
+std::size_t parameter_count(Shape shape) {
+  return shape == Shape::fisher ? 4 : 6;
+}
+
 std::size_t parameter_count(const Mixture& mixture) {
   std::size_t count = 0;
-  for (const Component& c : mixture.components) count += c.shape == Shape::fisher ? 4 : 6;
+  for (const Component& c : mixture.components) count += parameter_count(c.shape);
   return count;
 }
 

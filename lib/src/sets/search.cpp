@@ -12,16 +12,18 @@ namespace brink::detail {
 namespace {
 
 // More distinct axes than this are binned for the search; the fits chosen are refined on all.
-constexpr std::size_t kSearchAll = 6000;
-constexpr double kSearchCell_deg = 1.5;
+// Cells of 2 degrees move a reading by at most half that, which is nothing beside a set's spread.
+constexpr std::size_t kSearchAll = 2500;
+constexpr double kSearchCell_deg = 2.0;
 // Steps that rank starts, and steps that finish the best of them.
 constexpr FitLimits kScreen{25, 1e-6};
 constexpr FitLimits kFinish{300, 1e-8};
 constexpr FitLimits kRefine{2000, 1e-11};
+constexpr FitLimits kResample{100, 1e-5};
 constexpr std::size_t kFinished = 4;      // starts of each count that are finished
 constexpr std::size_t kSpreadStarts = 4;  // of each shape
 constexpr std::size_t kPeaks = 4;
-constexpr std::size_t kBeyondBest = 3;  // counts tried past the best one
+constexpr std::size_t kBeyondBest = 2;  // counts tried past the best one
 constexpr std::size_t kGreatestCount = 30;
 
 class Search {
@@ -30,6 +32,7 @@ class Search {
       : sample_(sample), options_(options) {}
 
   SearchResult run();
+  SearchResult run_from_centres();
 
  private:
   bool fits(const Mixture& mixture) const;
@@ -50,8 +53,17 @@ class Search {
   std::vector<std::optional<Candidate>> best_elliptical_;
 };
 
+// One reading more than the component has parameters.
+double least_weight_of(Shape shape) {
+  return 1.0 + static_cast<double>(parameter_count(shape));
+}
+
 bool better(const Candidate& a, const std::optional<Candidate>& b) {
   return !b || a.criterion < b->criterion;
+}
+
+bool same(const std::optional<Candidate>& a, const std::optional<Candidate>& b) {
+  return a && b && a->criterion == b->criterion;
 }
 
 bool all_of_shape(const Mixture& mixture, Shape shape) {
@@ -61,7 +73,8 @@ bool all_of_shape(const Mixture& mixture, Shape shape) {
 
 bool Search::fits(const Mixture& mixture) const {
   return std::all_of(mixture.components.begin(), mixture.components.end(), [&](const Component& c) {
-    return c.weight * sample_.total_weight >= options_.least_weight;
+    const double own = options_.any_size ? 1.0 : least_weight_of(c.shape);
+    return c.weight * sample_.total_weight >= std::max(own, options_.least_weight);
   });
 }
 
@@ -108,9 +121,13 @@ std::vector<Mixture> Search::starts_for(std::size_t count) const {
       starts.push_back(with_split(mixture, i, sample_));
     }
   };
-  grow(result_.by_count[count - 1], Shape::fisher);
-  if (count > 1) grow(best_fisher_[count - 1], Shape::fisher);
-  grow(best_elliptical_[count - 1], Shape::elliptical);
+  const auto& best = result_.by_count[count - 1];
+  grow(best, Shape::fisher);
+  // The best overall is often all of one shape: then its own list holds the same candidate.
+  if (!same(best_fisher_[count - 1], best)) grow(best_fisher_[count - 1], Shape::fisher);
+  if (count == 1 || !same(best_elliptical_[count - 1], best)) {
+    grow(best_elliptical_[count - 1], Shape::elliptical);
+  }
   for (std::size_t i = 0; i < kSpreadStarts; ++i) {
     for (const Shape shape : {Shape::fisher, Shape::elliptical}) {
       starts.push_back(spread_start(sample_, count, shape, options_.seed, 1000 * count + i));
@@ -203,12 +220,22 @@ SearchResult Search::run() {
   consider(fitted({Mixture{}}, kScreen).front());
   const std::size_t last = options_.count.value_or(kGreatestCount);
   for (std::size_t k = 1; k <= last; ++k) {
-    const bool possible = static_cast<double>(k) * options_.least_weight <= sample_.total_weight;
-    if (!possible || result_.by_count.size() < k || !result_.by_count[k - 1]) break;
+    if (static_cast<double>(k) > sample_.total_weight || result_.by_count.size() < k ||
+        !result_.by_count[k - 1])
+      break;
     explore(k);
     if (!options_.count && k >= best_count() + kBeyondBest) break;
   }
   for (std::size_t k = result_.by_count.size() - 1; k >= 2; --k) improve_by_moves(k);
+  return std::move(result_);
+}
+
+// One component at each centre; only their shapes are tried.
+SearchResult Search::run_from_centres() {
+  const std::size_t count = options_.centres.size();
+  for (auto* list : {&result_.by_count, &best_fisher_, &best_elliptical_}) list->resize(count + 1);
+  consider(fitted({centred_start(options_.centres)}, kFinish).front());
+  improve_shapes(count);
   return std::move(result_);
 }
 
@@ -237,14 +264,25 @@ const Candidate& SearchResult::best(std::optional<std::size_t> count) const {
   return **best;
 }
 
+Candidate refit(const Candidate& start, const AxisSample& sample) {
+  Candidate candidate;
+  candidate.fit = fit_mixture(start.fit.mixture, sample, kResample);
+  candidate.criterion =
+      bic(candidate.fit.mixture, candidate.fit.log_likelihood, sample.total_weight);
+  return candidate;
+}
+
 SearchResult search_mixture(const AxisSample& sample, const SearchOptions& options) {
   assert(sample.size > 0);
   const bool bin = sample.size > kSearchAll;
   const AxisSample fewer = bin ? binned(sample, Angle::degrees(kSearchCell_deg)) : AxisSample{};
-  SearchResult result = Search(bin ? fewer : sample, options).run();
+  Search search(bin ? fewer : sample, options);
+  SearchResult result = options.centres.empty() ? search.run() : search.run_from_centres();
   // Candidates this close to the best may change places with it on all of the sample.
   constexpr double close = 50.0;
-  const double least = result.best(options.count).criterion;
+  const auto count =
+      options.centres.empty() ? options.count : std::optional(options.centres.size());
+  const double least = result.best(count).criterion;
   refine(result, sample, options.threads, least + close);
   return result;
 }

@@ -11,7 +11,11 @@ namespace brink::detail {
 
 struct SearchOptions {
   std::optional<std::size_t> count;  // fixed number of components
-  double least_weight = 3.0;         // least expected weight of a component
+  // Least expected weight of a component. Whatever it is, a component needs one reading more than
+  // it has parameters, 5 round or 7 elliptical, unless `any_size`.
+  double least_weight = 0.0;
+  bool any_size = false;
+  std::vector<Vector3> centres;  // where given: one component at each, no search for others
   std::uint64_t seed = 1;
   unsigned threads = 0;
 };
@@ -32,5 +36,8 @@ struct SearchResult {
 };
 
 SearchResult search_mixture(const AxisSample& sample, const SearchOptions& options);
+
+// The candidate reached from `start` on another sample (a resample): no other places are tried.
+Candidate refit(const Candidate& start, const AxisSample& sample);
 
 }  // namespace brink::detail

@@ -113,7 +113,8 @@ std::string_view trimmed(std::string_view text) {
 
 SetsResult find_sets(const Readings& readings, const FindSetsOptions& options) {
   const AxisSample sample = merge_equal_axes(readings.normals, readings.weights);
-  const detail::SearchOptions search_options{options.count, 3.0, options.seed, options.threads};
+  const detail::SearchOptions search_options{options.count,  0.0, false, {}, options.seed,
+                                             options.threads};
   const detail::SearchResult search = detail::search_mixture(sample, search_options);
   const Mixture& mixture = search.best(options.count).fit.mixture;
   const std::vector<int> by_axis = classify(mixture, sample);

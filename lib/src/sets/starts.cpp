@@ -183,4 +183,13 @@ Mixture spread_start(const AxisSample& sample, std::size_t count, Shape shape, s
   return start;
 }
 
+Mixture centred_start(const std::vector<Vector3>& centres) {
+  const double share = 1.0 / (static_cast<double>(centres.size()) + 1.0);
+  Mixture start{share, {}};
+  for (const Vector3& centre : centres) {
+    start.components.push_back(component_at(centre, kStartKappa, Shape::fisher, share));
+  }
+  return start;
+}
+
 }  // namespace brink::detail

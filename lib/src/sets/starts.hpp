@@ -37,4 +37,7 @@ std::vector<Peak> peaks(const Mixture& mixture, const AxisSample& sample, std::s
 Mixture spread_start(const AxisSample& sample, std::size_t count, Shape shape, std::uint64_t seed,
                      std::uint64_t stream);
 
+// Equal round components at the centres.
+Mixture centred_start(const std::vector<Vector3>& centres);
+
 }  // namespace brink::detail

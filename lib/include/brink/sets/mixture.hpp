@@ -84,7 +84,9 @@ struct EmStep {
 };
 EmStep em_step(const Mixture& mixture, const AxisSample& sample, unsigned threads = 1);
 
-// Number of free parameters: 4 a Fisher component, 6 an elliptical one.
+// Number of free parameters, the weight of each component included: 4 a Fisher component, 6 an
+// elliptical one.
+std::size_t parameter_count(Shape shape);
 std::size_t parameter_count(const Mixture& mixture);
 // Bayesian information criterion -2 ln L + p ln N (Schwarz 1978, Ann. Statist. 6), least is best.
 double bic(const Mixture& mixture, double log_likelihood, double count);
