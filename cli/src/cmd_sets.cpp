@@ -36,6 +36,73 @@ Option count_option(SetsRun& run) {
   return option;
 }
 
+// DIP/DIR or DIP/DIR:WITHIN.
+Centre parse_centre(std::string_view text) {
+  const std::size_t colon = text.find(':');
+  Centre centre{parse_plane("--centre", text.substr(0, colon)), std::nullopt};
+  if (colon == std::string_view::npos) return centre;
+  Interval reach = above(0.0, "degrees");
+  reach.high = 90.0;
+  centre.within = parse_angle("--centre", text.substr(colon + 1), reach);
+  return centre;
+}
+
+Option centre_option(SetsRun& run) {
+  Option option;
+  option.name = "--centre";
+  option.value = "DIP/DIR[:WITHIN]";
+  option.help =
+      "A set lies here, and there are no others. With WITHIN, in degrees up to 90, the set is the "
+      "readings inside that angle of the centre (the nearest centre, where several reach a "
+      "reading); without it the set is found from there.";
+  option.repeatable = true;
+  option.take = [&run](std::string_view text) { run.find.centres.push_back(parse_centre(text)); };
+  return option;
+}
+
+Option least_share_option(SetsRun& run) {
+  Option option;
+  option.name = "--least-share";
+  option.value = "PCT";
+  option.help = "Share of the readings that a set has to hold, 0 up to below 100.";
+  option.default_text = "0";
+  option.take = [&run](std::string_view text) {
+    Interval share = from_to(0.0, 100.0, "per cent");
+    share.high_open = true;
+    run.find.least_share = parse_number("--least-share", text, share) / 100.0;
+  };
+  return option;
+}
+
+Option least_size_option(SetsRun& run) {
+  Option option;
+  option.name = "--least-size";
+  option.value = "N";
+  option.help =
+      "Number of readings that a set has to hold. A round set needs 5 and an elliptical one 7 in "
+      "any case.";
+  option.default_text = "0";
+  option.take = [&run](std::string_view text) {
+    run.find.least_size =
+        static_cast<std::size_t>(parse_whole("--least-size", text, 0, 1000000000));
+  };
+  return option;
+}
+
+Option stability_option(SetsRun& run) {
+  Option option;
+  option.name = "--resamples";
+  option.value = "N";
+  option.help =
+      "Number of times that the readings are drawn anew, with replacement, to see which sets come "
+      "back with their mean within its 95 % cone; 0 to leave that out, at most 10,000.";
+  option.default_text = "100";
+  option.take = [&run](std::string_view text) {
+    run.find.resamples = static_cast<std::size_t>(parse_whole("--resamples", text, 0, 10000));
+  };
+  return option;
+}
+
 Option containment_option(SetsRun& run) {
   Option option;
   option.name = "--containment";
@@ -52,8 +119,10 @@ Option containment_option(SetsRun& run) {
 }
 
 void check(const SetsRun& run) {
-  if (run.find.count && !run.input.set_column.empty()) {
-    throw Error(ErrorKind::argument, Place{.file = {}, .key = "--count"},
+  const bool asked = run.find.count || !run.find.centres.empty();
+  if (asked && !run.input.set_column.empty()) {
+    throw Error(ErrorKind::argument,
+                Place{.file = {}, .key = run.find.count ? "--count" : "--centre"},
                 "is given together with --set-column, which says which sets there are", {},
                 "one of the two");
   }
@@ -123,6 +192,7 @@ int run_sets(const std::vector<std::string>& files, const SetsRun& run, Streams&
 
 Command sets_command() {
   const auto run = std::make_shared<SetsRun>();
+  run->find.resamples = 100;
   Command command;
   command.name = "sets";
   command.summary = "Finds the discontinuity sets, or describes those given";
@@ -135,7 +205,11 @@ Command sets_command() {
       "of persistence (or trace length) and aperture are described too.";
   command.positionals = Positionals::files;
   command.options.push_back(count_option(*run));
+  command.options.push_back(centre_option(*run));
   command.options.push_back(set_column_option(run->input));
+  command.options.push_back(least_share_option(*run));
+  command.options.push_back(least_size_option(*run));
+  command.options.push_back(stability_option(*run));
   command.options.push_back(containment_option(*run));
   add_input_options(command.options, run->input);
   command.options.push_back(seed_option(run->find.seed));
@@ -150,6 +224,8 @@ Command sets_command() {
       {"brink sets quarry/readings.csv", "How many sets there are, and how they scatter."},
       {"brink sets quarry/readings.csv --count 3 -o sets.csv",
        "Three sets, and the readings with the set of each."},
+      {"brink sets quarry/readings.csv --centre 50/230:25 --centre 85/130:25",
+       "The readings within 25 degrees of two known sets."},
   };
   command.run = [run](const std::vector<std::string>& files, Streams& streams) {
     return run_sets(files, *run, streams);

@@ -13,8 +13,6 @@ namespace brink::cli {
 
 namespace {
 
-constexpr double kSignificance = 0.05;
-
 std::string plane_text(const Plane& plane) {
   return fmt::format("{:02.0f}/{:03.0f}", plane.dip.deg(),
                      std::fmod(std::round(plane.dip_direction.deg()), 360.0));
@@ -51,6 +49,8 @@ std::string table_of(const SetsResult& result, const Readings& readings) {
                                  {"68 % of readings\nwithin, deg"},
                                  {"shape", Align::left},
                                  {"Fisher\nfit"}});
+  const bool stability = !result.sets.empty() && result.sets.front().stability;
+  if (stability) columns.push_back({"came back,\n%"});
   TextTable table(std::move(columns));
   for (const SetStatistics& s : result.sets) {
     std::vector<std::string> cells{s.name, std::to_string(s.count)};
@@ -61,6 +61,7 @@ std::string table_of(const SetsResult& result, const Readings& readings) {
           std::string(s.shape ? name_of(*s.shape) : "-"), fit_text(s.fisher_fit)}) {
       cells.push_back(std::move(cell));
     }
+    if (stability) cells.push_back(s.stability ? fixed(100.0 * *s.stability, 0) : "-");
     table.add_row(std::move(cells));
   }
   return table.text();
@@ -75,17 +76,50 @@ std::string count_text(const SetsResult& result) {
                      result.undecided ? ", which decides nothing" : "");
 }
 
+// What to go by where a Fisher distribution does not fit.
 std::string misfit_text(const SetsResult& result) {
   std::string text;
   for (const SetStatistics& s : result.sets) {
-    if (!s.fisher_fit || s.fisher_fit->p_value >= kSignificance) continue;
-    text += paragraph(fmt::format(
-        "{}: a Fisher distribution does not fit (test of the {}, p {:.3f}); kappa and the cones "
-        "describe it only roughly. Eigenvalues {:.3f}, {:.3f}, {:.3f}.",
-        s.name, s.fisher_fit->test, s.fisher_fit->p_value, s.eigenvalues[0], s.eigenvalues[1],
-        s.eigenvalues[2]));
+    if (!s.pattern) continue;
+    std::string line = fmt::format(
+        "{}: a Fisher distribution does not fit (test of the {}, p {:.3f}), so kappa and the cones "
+        "above describe it only roughly. It is a {} (eigenvalues {:.3f}, {:.3f}, {:.3f})",
+        s.name, s.fisher_fit->test, s.fisher_fit->p_value, name_of(*s.pattern), s.eigenvalues[0],
+        s.eigenvalues[1], s.eigenvalues[2]);
+    if (s.bootstrap_cone) {
+      line += fmt::format("; the mean lies within {:.1f} degrees by resampling (95 %)",
+                          s.bootstrap_cone->deg());
+    }
+    text += paragraph(line + ".");
   }
   return text;
+}
+
+// Sets whose means can't be told apart.
+std::string comparison_text(const SetsResult& result) {
+  std::string text;
+  for (const MeanComparison& c : result.comparisons) {
+    if (c.test.p_value < kFitFails) continue;
+    text +=
+        fmt::format("{} and {} may share their mean: {:.1f} degrees apart, p {:.2f}\n",
+                    result.sets[c.a].name, result.sets[c.b].name, c.between.deg(), c.test.p_value);
+  }
+  return text;
+}
+
+std::string containment_text(const SetsResult& result) {
+  if (result.sets.empty() || result.sets.front().containment.empty()) return {};
+  std::vector<TextTable::Column> columns{{"set", Align::left}};
+  for (const ContainmentCone& cone : result.sets.front().containment) {
+    columns.push_back({fmt::format("{:g} % within,\ndeg", 100.0 * cone.share)});
+  }
+  TextTable table(std::move(columns));
+  for (const SetStatistics& s : result.sets) {
+    std::vector<std::string> cells{s.name};
+    for (const ContainmentCone& cone : s.containment) cells.push_back(angle_text(cone.half_angle));
+    table.add_row(std::move(cells));
+  }
+  return "\n" + table.text();
 }
 
 }  // namespace
@@ -101,7 +135,7 @@ std::string sets_text(const SetsResult& result, const Readings& readings) {
     text += fmt::format("uniformity of all readings (Bingham): {:.1f}, p {:.2g}\n",
                         result.uniformity->statistic, result.uniformity->p_value);
   }
-  return text + misfit_text(result);
+  return text + misfit_text(result) + comparison_text(result) + containment_text(result);
 }
 
 }  // namespace brink::cli

@@ -36,6 +36,39 @@ Value uniformity_value(const std::optional<TestResult>& test) {
   return Object{{"test", "Bingham"}, {"statistic", test->statistic}, {"p_value", test->p_value}};
 }
 
+Value tests_value(const std::optional<FisherFitTests>& tests) {
+  if (!tests) return nullptr;
+  const auto one = [](const TestResult& test) {
+    return Object{{"statistic", test.statistic}, {"p_value", test.p_value}};
+  };
+  return Object{{"colatitude", one(tests->colatitude)},
+                {"longitude", one(tests->longitude)},
+                {"two_variable", one(tests->two_variable)}};
+}
+
+Array comparisons_value(const SetsResult& result) {
+  Array comparisons;
+  for (const MeanComparison& c : result.comparisons) {
+    comparisons.push_back(Object{{"sets", Array{result.sets[c.a].name, result.sets[c.b].name}},
+                                 {"angle_deg", c.between.deg()},
+                                 {"test", "Watson and Williams"},
+                                 {"statistic", c.test.statistic},
+                                 {"p_value", c.test.p_value}});
+  }
+  return comparisons;
+}
+
+Array centres_value(const FindSetsOptions& options) {
+  Array centres;
+  for (const Centre& centre : options.centres) {
+    Object object{{"dip_deg", centre.plane.dip.deg()},
+                  {"dip_direction_deg", centre.plane.dip_direction.deg()}};
+    object.add("within_deg", angle_value(centre.within));
+    centres.push_back(std::move(object));
+  }
+  return centres;
+}
+
 Array containment_value(const SetStatistics& set) {
   Array cones;
   for (const ContainmentCone& cone : set.containment) {
@@ -68,7 +101,11 @@ Object set_object(const SetStatistics& set) {
                 {"woodcock_shape", word_value(set.woodcock_shape)},
                 {"woodcock_strength", word_value(set.woodcock_strength)},
                 {"fisher_fit", fit_value(set.fisher_fit)},
-                {"shape", set.shape ? Value(name_of(*set.shape)) : Value()}};
+                {"fit_tests", tests_value(set.fit_tests)},
+                {"pattern", set.pattern ? Value(name_of(*set.pattern)) : Value()},
+                {"bootstrap_cone_deg", angle_value(set.bootstrap_cone)},
+                {"shape", set.shape ? Value(name_of(*set.shape)) : Value()},
+                {"stability", set.stability}};
 }
 
 }  // namespace
@@ -77,11 +114,19 @@ std::string_view name_of(Shape shape) {
   return shape == Shape::fisher ? "round" : "elliptical";
 }
 
+std::string_view name_of(Pattern pattern) {
+  return pattern == Pattern::girdle ? "girdle" : "cluster";
+}
+
 Object sets_inputs(const FindSetsOptions& options) {
   Array shares;
   for (const double share : options.containment_shares) shares.push_back(share);
   return Object{{"count", options.count ? Value(std::uint64_t{*options.count}) : Value()},
+                {"centres", centres_value(options)},
+                {"least_share", options.least_share},
+                {"least_size", std::uint64_t{options.least_size}},
                 {"containment_shares", std::move(shares)},
+                {"resamples", std::uint64_t{options.resamples}},
                 {"seed", options.seed}};
 }
 
@@ -110,6 +155,7 @@ Value sets_result(const SetsResult& result, const JointLengths& lengths) {
                 {"undecided", result.undecided},
                 {"runner_up", result.runner_up ? count_value(*result.runner_up) : Value()},
                 {"uniformity", uniformity_value(result.uniformity)},
+                {"mean_comparisons", comparisons_value(result)},
                 {"traverses", traverse_frequencies(lengths.spacing)}};
 }
 

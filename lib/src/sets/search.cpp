@@ -264,9 +264,17 @@ const Candidate& SearchResult::best(std::optional<std::size_t> count) const {
   return **best;
 }
 
-Candidate refit(const Candidate& start, const AxisSample& sample) {
+bool needs_bins(const AxisSample& sample) {
+  return sample.size > kSearchAll;
+}
+
+AxisSample bins_for_search(const AxisSample& sample) {
+  return binned(sample, Angle::degrees(kSearchCell_deg));
+}
+
+Candidate refit(const Mixture& start, const AxisSample& sample) {
   Candidate candidate;
-  candidate.fit = fit_mixture(start.fit.mixture, sample, kResample);
+  candidate.fit = fit_mixture(start, sample, kResample);
   candidate.criterion =
       bic(candidate.fit.mixture, candidate.fit.log_likelihood, sample.total_weight);
   return candidate;
@@ -274,8 +282,8 @@ Candidate refit(const Candidate& start, const AxisSample& sample) {
 
 SearchResult search_mixture(const AxisSample& sample, const SearchOptions& options) {
   assert(sample.size > 0);
-  const bool bin = sample.size > kSearchAll;
-  const AxisSample fewer = bin ? binned(sample, Angle::degrees(kSearchCell_deg)) : AxisSample{};
+  const bool bin = needs_bins(sample);
+  const AxisSample fewer = bin ? bins_for_search(sample) : AxisSample{};
   Search search(bin ? fewer : sample, options);
   SearchResult result = options.centres.empty() ? search.run() : search.run_from_centres();
   // Candidates this close to the best may change places with it on all of the sample.

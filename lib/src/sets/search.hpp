@@ -37,7 +37,11 @@ struct SearchResult {
 
 SearchResult search_mixture(const AxisSample& sample, const SearchOptions& options);
 
+// Whether a search runs on bins of the sample, and these bins.
+bool needs_bins(const AxisSample& sample);
+AxisSample bins_for_search(const AxisSample& sample);
+
 // The candidate reached from `start` on another sample (a resample): no other places are tried.
-Candidate refit(const Candidate& start, const AxisSample& sample);
+Candidate refit(const Mixture& start, const AxisSample& sample);
 
 }  // namespace brink::detail

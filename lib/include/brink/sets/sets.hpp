@@ -22,6 +22,11 @@ struct ContainmentCone {
   Angle half_angle;
 };
 
+// Woodcock 1977: shape above 1 a cluster, below 1 a girdle.
+enum class Pattern { cluster, girdle };
+
+inline constexpr double kFitFails = 0.05;
+
 // Statistics of one set; estimators and sources in sphere/fisher.hpp and sphere/tensor.hpp. A value
 // that the data cannot give (one reading has no kappa) is absent. The readings of the set are
 // counted whole, whatever their probability of belonging to it.
@@ -43,13 +48,27 @@ struct SetStatistics {
   std::optional<double> woodcock_shape;      // infinite where S2 = S3
   std::optional<double> woodcock_strength;   // infinite where S3 = 0
   std::optional<FisherFit> fisher_fit;       // the verdict of the three tests of goodness.hpp
-  std::optional<Shape> shape;                // of the component, where the set was found
+  std::optional<FisherFitTests> fit_tests;   // all three
+  // Where the fit fails (p below kFitFails): what the scatter looks like instead, and a cone for
+  // the mean that assumes no distribution (sphere/bootstrap.hpp, 95 %).
+  std::optional<Pattern> pattern;
+  std::optional<Angle> bootstrap_cone;
+  std::optional<Shape> shape;       // of the component, where the set was found
+  std::optional<double> stability;  // share of resamples in which it came back (stability.hpp)
 };
 
 // Least value of the criterion with this number of sets.
 struct CountTried {
   std::size_t count = 0;
   double bic = 0.0;
+};
+
+// Do two sets share their mean (Watson & Williams 1956, goodness.hpp)? Equal kappas assumed.
+struct MeanComparison {
+  std::size_t a = 0;  // index into SetsResult::sets; a < b
+  std::size_t b = 0;
+  Angle between;  // the two means, as axes
+  TestResult test;
 };
 
 // Sets by weight, heaviest first, then by first appearance.
@@ -59,11 +78,12 @@ struct SetsResult {
   std::size_t unassigned = 0;
   std::optional<double> log_likelihood;  // over the whole sphere; absent where membership was given
   std::optional<double> bic;
-  std::vector<CountTried> tried;         // by count; one entry where the count was fixed
-  std::optional<CountTried> runner_up;   // next best count, where the count was chosen
-  bool undecided = false;                // the runner-up is less than kDecided behind
-  std::optional<Mixture> mixture;        // components in the order of `sets`
-  std::optional<TestResult> uniformity;  // Bingham's test on all readings
+  std::vector<CountTried> tried;            // by count; one entry where the count was fixed
+  std::optional<CountTried> runner_up;      // next best count, where the count was chosen
+  bool undecided = false;                   // the runner-up is less than kDecided behind
+  std::optional<Mixture> mixture;           // components in the order of `sets`
+  std::optional<TestResult> uniformity;     // Bingham's test on all readings
+  std::vector<MeanComparison> comparisons;  // every pair that can be compared
   std::vector<std::string> warnings;
 };
 
@@ -71,19 +91,35 @@ struct SetsResult {
 // Stat. Assoc. 90).
 inline constexpr double kDecided = 2.0;
 
+// Where a set is known to lie. With `within`, the set is the readings inside that angle; without,
+// it is found from there.
+struct Centre {
+  Plane plane;
+  std::optional<Angle> within;  // above 0, at most 90 degrees
+};
+
 struct FindSetsOptions {
   std::optional<std::size_t> count;  // fixed number of sets; chosen by the criterion where absent
   std::uint64_t seed = 1;
   unsigned threads = 0;
   std::vector<double> containment_shares = {};  // each above 0 and below 1
+  std::vector<Centre> centres = {};             // all with `within` or none; then `count` is theirs
+  double least_share = 0.0;    // of the readings that a set has to hold, 0 up to below 1
+  std::size_t least_size = 0;  // number of readings that a set has to hold
+  std::size_t resamples = 0;   // for SetStatistics::stability; 0: not asked for
 };
 
 // Finds the sets by the mixture of sets/mixture.hpp; the number and shape of components by the
-// least BIC. A reading belongs to the likeliest component, or to none where the uniform part is
-// likelier. Axial throughout: a set that straddles the rim of the net is one set. At least one
-// reading is needed; no set at all is a result. Names are J1, J2, ... by weight.
-// The p value of fisher_fit is that of samples drawn from the mixture with round components and
-// divided by the same rule, because a set cut out of a mixture is no longer a whole sample.
+// least BIC. Without a fixed count a component has to hold one reading more than it has parameters
+// (5 round, 7 elliptical), and least_size and least_share. A reading belongs to the likeliest
+// component, or to none where the uniform part is likelier. Axial throughout: a set that straddles
+// the rim of the net is one set. At least one reading is needed; no set at all is a result. Names
+// are J1, J2, ... by weight. The p value of fisher_fit is that of samples drawn from the mixture
+// with round components and divided by the same rule, because a set cut out of a mixture is no
+// longer a whole sample. With centres, EM starts there and nowhere else; with centres that say how
+// far they reach, every reading belongs to the nearest centre that reaches it, and no test of fit
+// is made, for a set cut out by a cone can't pass it. Throws ErrorKind::argument for centres with
+// and without `within` mixed, and for a share or size out of its range.
 SetsResult find_sets(const Readings& readings, const FindSetsOptions& options);
 
 // Describes the sets that an extra column names; empty cells and "0" are no set. Throws
@@ -97,6 +133,18 @@ SetsResult sets_by_column(const Readings& readings, std::string_view heading,
 SetsResult sets_by_membership(const Readings& readings, std::span<const int> assignment,
                               std::span<const std::string> names,
                               const FindSetsOptions& options = {});
+
+// One set out of those named, under a new name; of a single set: renames it.
+struct SetMerge {
+  std::string name;
+  std::vector<std::string> of;
+};
+
+// The result with sets merged and renamed; the others stay. A merged set is described anew and has
+// no component, shape or stability. Order as ever: by weight. Throws ErrorKind::argument for a name
+// that no set has, a set used twice, and a new name that another set has.
+SetsResult merge_sets(const Readings& readings, const SetsResult& result,
+                      std::span<const SetMerge> merges, const FindSetsOptions& options = {});
 
 // Statistics of one set of axes, without the test of fit. At least one axis.
 SetStatistics describe_set(std::string name, std::span<const Vector3> axes,
