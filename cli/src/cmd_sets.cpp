@@ -43,6 +43,7 @@ Centre parse_centre(std::string_view text) {
   if (colon == std::string_view::npos) return centre;
   Interval reach = above(0.0, "degrees");
   reach.high = 90.0;
+  reach.high_open = false;
   centre.within = parse_angle("--centre", text.substr(colon + 1), reach);
   return centre;
 }

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cassert>
 #include <cmath>
+#include <utility>
 
 #include "brink/base/parallel.hpp"
 #include "starts.hpp"
@@ -19,12 +20,18 @@ constexpr double kSearchCell_deg = 2.0;
 constexpr FitLimits kScreen{25, 1e-6};
 constexpr FitLimits kFinish{300, 1e-8};
 constexpr FitLimits kRefine{2000, 1e-11};
+// After a search on bins little is left to gain, and a step costs a pass over all readings.
+constexpr FitLimits kRefineBinned{60, 1e-8};
 constexpr FitLimits kResample{100, 1e-5};
 constexpr std::size_t kFinished = 4;      // starts of each count that are finished
 constexpr std::size_t kSpreadStarts = 4;  // of each shape
 constexpr std::size_t kPeaks = 4;
 constexpr std::size_t kBeyondBest = 2;  // counts tried past the best one
-constexpr std::size_t kGreatestCount = 30;
+// Greatest number of sets looked for unasked. With 10^5 and more readings every small departure
+// from the shapes of the components would buy another one, and nobody designs for more than a
+// dozen.
+constexpr std::size_t kGreatestCount = 12;
+constexpr std::size_t kMergesPerComponent = 2;  // pairs tried, nearest means first
 
 class Search {
  public:
@@ -195,16 +202,38 @@ void Search::explore(std::size_t count) {
   if (result_.by_count.size() > count && result_.by_count[count]) improve_shapes(count);
 }
 
-// Merges every pair of the best mixture of `count` into one component of either shape.
-bool Search::improve_by_moves(std::size_t count) {
-  if (count < 2 || !result_.by_count[count]) return false;
-  const Mixture& mixture = result_.by_count[count]->fit.mixture;
-  std::vector<Mixture> starts;
+// Pairs of components, nearest means first: far ones have nothing to gain by merging.
+std::vector<std::pair<std::size_t, std::size_t>> nearest_pairs(const Mixture& mixture) {
+  struct Pair {
+    double cosine;
+    std::size_t i;
+    std::size_t j;
+  };
+  const std::size_t count = mixture.components.size();
+  std::vector<Pair> all;
   for (std::size_t i = 0; i < count; ++i) {
     for (std::size_t j = i + 1; j < count; ++j) {
-      for (const Shape shape : {Shape::fisher, Shape::elliptical}) {
-        starts.push_back(with_merged(mixture, i, j, shape));
-      }
+      all.push_back({std::abs(mixture.components[i].mean.dot(mixture.components[j].mean)), i, j});
+    }
+  }
+  std::stable_sort(all.begin(), all.end(),
+                   [](const Pair& a, const Pair& b) { return a.cosine > b.cosine; });
+  std::vector<std::pair<std::size_t, std::size_t>> pairs;
+  for (const Pair& p : all) {
+    if (pairs.size() == kMergesPerComponent * count) break;
+    pairs.emplace_back(p.i, p.j);
+  }
+  return pairs;
+}
+
+// Merges pairs of the best mixture of `count` into one component of either shape.
+bool Search::improve_by_moves(std::size_t count) {
+  if (count < 2 || !result_.by_count[count]) return false;
+  const Mixture mixture = result_.by_count[count]->fit.mixture;
+  std::vector<Mixture> starts;
+  for (const auto& [i, j] : nearest_pairs(mixture)) {
+    for (const Shape shape : {Shape::fisher, Shape::elliptical}) {
+      starts.push_back(with_merged(mixture, i, j, shape));
     }
   }
   const auto before = result_.by_count[count - 1];
@@ -239,13 +268,24 @@ SearchResult Search::run_from_centres() {
   return std::move(result_);
 }
 
-// The candidates on all of the sample.
-void refine(SearchResult& result, const AxisSample& sample, unsigned threads, double limit) {
+// The candidates on all of the sample: every one is weighed there, so that they stay comparable,
+// and those within `close` of the best are fitted to the end.
+void refine(SearchResult& result, const AxisSample& sample, const FitLimits& limits,
+            const SearchOptions& options) {
+  constexpr double close = 20.0;
+  const auto fit = [&](Candidate& candidate, const FitLimits& steps) {
+    candidate.fit = fit_mixture(candidate.fit.mixture, sample, steps, options.threads);
+    candidate.criterion =
+        bic(candidate.fit.mixture, candidate.fit.log_likelihood, sample.total_weight);
+  };
   for (auto& candidate : result.by_count) {
-    if (!candidate || candidate->criterion > limit) continue;
-    candidate->fit = fit_mixture(candidate->fit.mixture, sample, kRefine, threads);
-    candidate->criterion =
-        bic(candidate->fit.mixture, candidate->fit.log_likelihood, sample.total_weight);
+    if (candidate) fit(*candidate, {1, 0.0});
+  }
+  const auto count =
+      options.centres.empty() ? options.count : std::optional(options.centres.size());
+  const double limit = result.best(count).criterion + close;
+  for (auto& candidate : result.by_count) {
+    if (candidate && candidate->criterion <= limit) fit(*candidate, limits);
   }
 }
 
@@ -286,12 +326,7 @@ SearchResult search_mixture(const AxisSample& sample, const SearchOptions& optio
   const AxisSample fewer = bin ? bins_for_search(sample) : AxisSample{};
   Search search(bin ? fewer : sample, options);
   SearchResult result = options.centres.empty() ? search.run() : search.run_from_centres();
-  // Candidates this close to the best may change places with it on all of the sample.
-  constexpr double close = 50.0;
-  const auto count =
-      options.centres.empty() ? options.count : std::optional(options.centres.size());
-  const double least = result.best(count).criterion;
-  refine(result, sample, options.threads, least + close);
+  refine(result, sample, bin ? kRefineBinned : kRefine, options);
   return result;
 }
 
