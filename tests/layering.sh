@@ -56,7 +56,7 @@ only() {
 }
 only 'CLI/' 'cli/src/command_line.cpp'
 only 'toml\+\+' 'lib/src/record/toml_tree.cpp'
-only 'nlohmann/' 'lib/src/record/json.cpp'
+only 'nlohmann/' 'lib/src/record/json.cpp lib/src/design/centreline.cpp' # JSON out; GeoJSON in
 only '(cairo|pango)' 'plot/src/cairo_painter.cpp'
 
 longest=$(find lib plot cli -name '*.?pp' -exec wc -l {} + | awk '$2 != "total" && $1 > 600 {print $2 " has " $1 " lines; the limit is 600"}')
