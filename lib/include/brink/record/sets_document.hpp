@@ -8,7 +8,8 @@
 namespace brink {
 
 // What find_sets() was asked for: {count, centres[] {dip_deg, dip_direction_deg,
-// within_deg}, least_share, least_size, containment_shares[], resamples, seed}; what was not given is null.
+// within_deg}, least_share, least_size, containment_shares[], resamples, seed}; what was not given
+// is null.
 Object sets_inputs(const FindSetsOptions& options);
 
 // "round" for a Fisher component, "elliptical" for an angular central Gaussian one.
