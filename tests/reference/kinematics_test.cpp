@@ -153,7 +153,7 @@ bool inward(const Vector& p, const Vector& q, const Vector& face, const Vector& 
   return true;
 }
 
-// Weight 1 downwards, resolved by solving for the normal forces; see lib/doc/methods.md, wedge.
+// Weight 1 downwards, resolved by solving for the normal forces; as in lib/doc/methods.md, wedge.
 double safety_ref(const Site& s, const Axis& p, const Axis& q) {
   const Vector face = normal_of(s.face_dip, s.face_direction);
   const Vector upper = normal_of(s.upper_dip, s.upper_direction);
