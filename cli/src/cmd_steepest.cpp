@@ -37,9 +37,9 @@ bool draws(const SteepestRun& run) {
          known_ending("-o", run.output.output, {".csv", ".svg", ".pdf", ".png"}) != ".csv";
 }
 
-Value inputs_value(const Readings& readings, const SteepestRun& run,
-                   const SteepestOptions& options) {
-  Object inputs = input_record(readings, run.input);
+Value inputs_value(const Readings& readings, const SteepestRun& run, const SteepestOptions& options,
+                   const std::optional<Site>& site) {
+  Object inputs = input_record(readings, run.input, site);
   const Object search = steepest_inputs(options);
   for (const auto& [key, value] : search.members()) inputs.add(key, value);
   record_set_choice(inputs, run.sets, run.input);
@@ -59,21 +59,24 @@ plot::Painted output_bytes(const SteepestResult& result, const Readings& reading
 
 int run_steepest(const std::vector<std::string>& files, const SteepestRun& run, Streams& streams) {
   check_set_options(run.sets, run.input);
-  SteepestOptions options = steepest_options(run.choice);
+  const std::optional<Site> site = load_site(files, run.input);
+  SteepestOptions options = steepest_options(run.choice, site);
   options.map = draws(run);
-  const Readings readings = load_readings(files, run.input, run.output, streams);
+  const Readings readings = load_readings(files, run.input, run.output, streams, 20, site);
   if (readings.size() == 0) require_usable(readings, run.input);
-  const SetsResult sets = chosen_sets(readings, run.sets, run.input, options.seed, options.threads);
+  const SetsResult sets =
+      chosen_sets(readings, run.sets, run.input, options.seed, options.threads, site);
   const SteepestResult result = find_steepest(readings, sets, options);
   std::vector<std::string> warnings = sets.warnings;
   warnings.insert(warnings.end(), result.warnings.begin(), result.warnings.end());
   const plot::Painted file = output_bytes(result, readings, sets, run);
   warnings.insert(warnings.end(), file.warnings.begin(), file.warnings.end());
   print_warnings(warnings, run.output, streams);
-  if (!run.output.output.empty()) write_file(run.output.output, file.bytes, files);
+  if (!run.output.output.empty())
+    write_file(run.output.output, file.bytes, files_read(files, site));
   if (run.output.json) {
     warnings.insert(warnings.begin(), readings.warnings.begin(), readings.warnings.end());
-    streams.out << to_json(result_document("steepest", inputs_value(readings, run, options),
+    streams.out << to_json(result_document("steepest", inputs_value(readings, run, options, site),
                                            warnings, steepest_result(result, sets)));
   } else {
     streams.out << steepest_text(result, sets);

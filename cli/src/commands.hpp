@@ -12,6 +12,8 @@ Command sets_command();
 Command kinematics_command();
 Command stereonet_command();
 Command steepest_command();
+Command alignment_command();
+Command bench_command();
 Command wedge_command();
 Command plane_command();
 Command topple_command();
@@ -19,9 +21,9 @@ Command report_command();
 
 // In the order of the help. A command joins the list when it works.
 inline std::vector<Command> all_commands() {
-  return {readings_command(),  sets_command(),     kinematics_command(),
-          stereonet_command(), steepest_command(), wedge_command(),
-          plane_command(),     topple_command(),   report_command()};
+  return {readings_command(), sets_command(),      kinematics_command(), stereonet_command(),
+          steepest_command(), alignment_command(), bench_command(),      wedge_command(),
+          plane_command(),    topple_command(),    report_command()};
 }
 
 }  // namespace brink::cli

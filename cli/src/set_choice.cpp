@@ -1,6 +1,7 @@
 #include "set_choice.hpp"
 
 #include "brink/base/error.hpp"
+#include "site_tests.hpp"
 
 namespace brink::cli {
 
@@ -17,15 +18,17 @@ void check_set_options(const SetChoice& choice, const InputOptions& input) {
 }
 
 SetsResult chosen_sets(const Readings& readings, const SetChoice& choice, const InputOptions& input,
-                       std::uint64_t seed, unsigned threads) {
+                       std::uint64_t seed, unsigned threads, const std::optional<Site>& site) {
   if (choice.none) {
     SetsResult none;
     none.assignment.assign(readings.size(), 0);
     none.unassigned = readings.size();
     return none;
   }
-  if (!input.set_column.empty()) return sets_by_column(readings, input.set_column);
-  return find_sets(readings, {std::nullopt, seed, threads});
+  FindSetsOptions options;
+  options.seed = seed;
+  options.threads = threads;
+  return sets_with_site(readings, input.set_column, options, site);
 }
 
 void record_set_choice(Object& inputs, const SetChoice& choice, const InputOptions& input) {

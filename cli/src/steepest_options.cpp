@@ -49,15 +49,6 @@ Option limit_option(SteepestChoice& target) {
   return option;
 }
 
-// The kinematic options but --face.
-void add_test_options(std::vector<Option>& options, SteepestChoice& target) {
-  std::vector<Option> shared;
-  add_kinematic_options(shared, target.tests);
-  for (Option& option : shared) {
-    if (option.name != "--face") options.push_back(std::move(option));
-  }
-}
-
 void add_target_options(std::vector<Option>& options, SteepestChoice& target) {
   options.push_back(number_option("--target", "FS",
                                   "Least factor of safety of the wedges between the means of every "
@@ -86,9 +77,26 @@ double needed(const std::optional<double>& value, const char* option) {
 
 }  // namespace
 
+void add_test_options(std::vector<Option>& options, KinematicsOptions& target, Typed& typed) {
+  std::vector<Option> shared;
+  add_kinematic_options(shared, target, false);
+  std::erase_if(shared, [](const Option& option) { return option.name == "--face"; });
+  note_typed(shared, typed);
+  options.insert(options.end(), shared.begin(), shared.end());
+}
+
+ModeSettings test_settings(const KinematicsOptions& tests, const Typed& typed,
+                           const std::optional<Site>& site) {
+  KinematicsOptions pattern = tests;
+  pattern.faces = {Face{}};  // so that the site's own faces don't count
+  const KinematicsOptions merged = tests_with_site(pattern, typed, site).front();
+  require_face_and_friction({merged}, typed, site);
+  return {merged.upper, merged.friction, merged.strike_tolerance, merged.toppling_tolerance};
+}
+
 void add_steepest_options(std::vector<Option>& options, SteepestChoice& target,
                           bool every_azimuth) {
-  add_test_options(options, target);
+  add_test_options(options, target.tests, target.typed);
   options.push_back(limit_option(target));
   options.push_back(flag_option("--weighted",
                                 "Shares of the readings' weight in place of their number.",
@@ -116,10 +124,9 @@ void add_steepest_options(std::vector<Option>& options, SteepestChoice& target,
   options.push_back(threads_option(target.tests.threads));
 }
 
-SteepestOptions steepest_options(const SteepestChoice& choice) {
+SteepestOptions steepest_options(const SteepestChoice& choice, const std::optional<Site>& site) {
   SteepestOptions options = choice.search;
-  options.settings = {choice.tests.upper, choice.tests.friction, choice.tests.strike_tolerance,
-                      choice.tests.toppling_tolerance};
+  options.settings = test_settings(choice.tests, choice.typed, site);
   options.seed = choice.tests.seed;
   options.threads = choice.tests.threads;
   if (!choice.target) return options;
@@ -127,7 +134,7 @@ SteepestOptions steepest_options(const SteepestChoice& choice) {
   target.factor_of_safety = *choice.target;
   target.wedge.geometry.size = {WedgeMeasure::height, needed(choice.height, "--height")};
   target.wedge.unit_weight_kN_m3 = needed(choice.unit_weight, "--unit-weight");
-  const MohrCoulomb strength{choice.cohesion.value_or(0.0), choice.tests.friction};
+  const MohrCoulomb strength{choice.cohesion.value_or(0.0), options.settings.friction};
   target.wedge.strength1 = target.wedge.strength2 = strength;
   target.wedge.water = WaterFill{choice.water_fill.value_or(0.0)};
   options.safety = target;

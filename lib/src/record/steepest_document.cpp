@@ -1,11 +1,9 @@
 #include "brink/record/steepest_document.hpp"
 
 #include <array>
-#include <cmath>
 #include <utility>
 #include <variant>
 
-#include "brink/base/number.hpp"
 #include "brink/record/kinematics_document.hpp"
 
 namespace brink {
@@ -78,18 +76,9 @@ Value target_value(const SteepestOptions& options) {
                 {"water_unit_weight_kN_m3", wedge.water_unit_weight_kN_m3}};
 }
 
-// A cell of CSV: quoted where it has to be.
-std::string cell(const std::string& text) {
-  if (text.find_first_of(",\"\n\r") == std::string::npos) return text;
-  std::string quoted = "\"";
-  for (const char c : text) quoted += c == '"' ? std::string("\"\"") : std::string(1, c);
-  return quoted + '"';
-}
-
-void add_shares(std::string& row, const std::optional<ModeShares>& shares) {
+void add_shares(CsvTable& table, const std::optional<ModeShares>& shares) {
   for (std::size_t m = 0; m < kModes; ++m) {
-    row += ',';
-    if (shares) row += shortest((*shares)[m] * 100.0);
+    table.cell(shares ? std::optional((*shares)[m] * 100.0) : std::nullopt);
   }
 }
 
@@ -155,48 +144,64 @@ Object steepest_face_object(const SteepestFace& face, const SetsResult& sets) {
   return object;
 }
 
-Value steepest_result(const SteepestResult& result, const SetsResult& sets) {
-  Array azimuths;
-  for (const SteepestFace& face : result.azimuths) {
-    azimuths.emplace_back(steepest_face_object(face, sets));
-  }
+Value known_sets_value(const SetsResult& sets) {
   Array known;
   for (const SetStatistics& set : sets.sets) {
     known.push_back(
         Object{{"name", set.name}, {"count", set.count}, {"mean", plane_value(set.mean)}});
   }
-  return Object{{"azimuths", std::move(azimuths)}, {"sets", std::move(known)}};
+  return known;
+}
+
+Value steepest_result(const SteepestResult& result, const SetsResult& sets) {
+  Array azimuths;
+  for (const SteepestFace& face : result.azimuths) {
+    azimuths.emplace_back(steepest_face_object(face, sets));
+  }
+  return Object{{"azimuths", std::move(azimuths)}, {"sets", known_sets_value(sets)}};
+}
+
+std::vector<std::string> steepest_headings() {
+  std::vector<std::string> headings{"dip_direction_deg", "steepest_dip_deg", "governed_by",
+                                    "governing_sets"};
+  for (const char* when : {"", "_one_step_steeper", "_five_degrees_steeper"}) {
+    for (const Mode mode : kModeOrder) {
+      headings.push_back(std::string(mode_key(mode)) + "_percent" + when);
+    }
+  }
+  headings.insert(headings.end(), {"confident_dip_deg", "least_factor_of_safety"});
+  return headings;
+}
+
+void add_steepest_cells(CsvTable& table, const SteepestFace& face, const SetsResult& sets) {
+  table.cell(face.dip_direction.deg()).cell(face.steepest_dip.deg());
+  if (face.governing_mode) {
+    table.cell(mode_key(*face.governing_mode));
+  } else {
+    table.cell(face.governs == Governs::factor_of_safety ? "factor_of_safety" : "");
+  }
+  if (face.governing_sets.empty()) {
+    table.cell("");
+  } else {
+    const GoverningSets& first = face.governing_sets.front();
+    table.cell(of_pairs(*face.governing_mode) ? set_pair_name(sets, first.set_a, first.set_b)
+                                              : set_name(sets, first.set_a));
+  }
+  add_shares(table, face.shares);
+  add_shares(table, face.shares_one_step_steeper);
+  add_shares(table, face.shares_five_degrees_steeper);
+  table.cell(face.confident_dip ? std::optional(face.confident_dip->deg()) : std::nullopt);
+  table.cell(face.weakest_wedge ? std::optional(face.weakest_wedge->factor_of_safety)
+                                : std::nullopt);
 }
 
 std::string steepest_csv(const SteepestResult& result, const SetsResult& sets) {
-  std::string text = "dip_direction_deg,steepest_dip_deg,governing_mode,governing_sets";
-  for (const char* when : {"", "_one_step_steeper", "_five_degrees_steeper"}) {
-    for (const Mode mode : kModeOrder) {
-      text += ',' + std::string(mode_key(mode)) + "_percent" + when;
-    }
-  }
-  text += ",confident_dip_deg,least_factor_of_safety\n";
+  CsvTable table(steepest_headings());
   for (const SteepestFace& face : result.azimuths) {
-    std::string row =
-        shortest(face.dip_direction.deg()) + ',' + shortest(face.steepest_dip.deg()) + ',';
-    if (face.governing_mode) row += mode_key(*face.governing_mode);
-    row += ',';
-    if (!face.governing_sets.empty()) {
-      const GoverningSets& first = face.governing_sets.front();
-      row += cell(of_pairs(*face.governing_mode) ? set_pair_name(sets, first.set_a, first.set_b)
-                                                 : set_name(sets, first.set_a));
-    }
-    add_shares(row, face.shares);
-    add_shares(row, face.shares_one_step_steeper);
-    add_shares(row, face.shares_five_degrees_steeper);
-    row += ',' + (face.confident_dip ? shortest(face.confident_dip->deg()) : std::string());
-    row += ',';
-    if (face.weakest_wedge && std::isfinite(face.weakest_wedge->factor_of_safety)) {
-      row += shortest(face.weakest_wedge->factor_of_safety);
-    }
-    text += row + '\n';
+    add_steepest_cells(table, face, sets);
+    table.end_row();
   }
-  return text;
+  return table.text();
 }
 
 }  // namespace brink

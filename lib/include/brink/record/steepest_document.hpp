@@ -3,8 +3,10 @@
 
 #include <string>
 #include <string_view>
+#include <vector>
 
 #include "brink/design/steepest.hpp"
+#include "brink/record/csv_tables.hpp"
 #include "brink/record/document.hpp"
 #include "brink/sets/sets.hpp"
 
@@ -26,10 +28,17 @@ Object steepest_inputs(const SteepestOptions& options);
 // confident_dip_deg, weakest_wedge{sets[2], factor_of_safety}, weakest_wedge_one_step_steeper}.
 Object steepest_face_object(const SteepestFace& face, const SetsResult& sets);
 
+// What a document says of the sets behind its names: [] {name, count, mean}.
+Value known_sets_value(const SetsResult& sets);
+
 // {azimuths[], sets[] {name, count, mean}}.
 Value steepest_result(const SteepestResult& result, const SetsResult& sets);
 
-// One row an azimuth, shares in percent (RFC 4180 with line feeds).
+// The columns of one face in a table, and its cells; shares in percent.
+std::vector<std::string> steepest_headings();
+void add_steepest_cells(CsvTable& table, const SteepestFace& face, const SetsResult& sets);
+
+// One row an azimuth.
 std::string steepest_csv(const SteepestResult& result, const SetsResult& sets);
 
 }  // namespace brink
